@@ -39,13 +39,21 @@ internal sealed class UnitLoadSolver(TrussGeometry truss, StiffnessSystem system
     {
         Array.Clear(_load);
         Array.Clear(_displacements);
+        Array.Clear(_change);
         tensions.Clear();
         _load[(2 * joint) + 1] = -1;
         var lack = double.PositiveInfinity;
         for (var round = 0; round <= MostRefinements; round++)
         {
             var now = Unbalanced(tensions);
-            if (now <= GoodEnough || (round > 2 && !(now < lack / 2)))
+            if (now <= GoodEnough)
+            {
+                // Nothing left to correct: what the last solve changed says nothing about what is still wrong.
+                Array.Clear(_change);
+                break;
+            }
+
+            if (round > 2 && !(now < lack / 2))
             {
                 break;
             }
