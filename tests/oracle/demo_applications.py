@@ -77,8 +77,29 @@ def application(reference, title, kind, first, last, trips, configurations, cros
 
 
 APPLICATIONS = {
-    "01-reactor-vessel-13-axle.json": application(
-        "2027-0011", "Reactor vessel, 13 axles, 115 t, one trip along road P14", "SPECIAL_SINGLE_TRIP", (2027, 1, 12), (2027, 1, 16), 1,
-        [configuration("loaded", "Loaded, outbound", "13-axle combination", thirteen_axles(), 3.05, 4.2, 4.45)],
-        [on("P14-0032", FORWARD), on("P14-0087", FORWARD)]),
+    "01-reactor-vessel-13-axles.json": application(
+        "2027-0011", "Reactor vessel on 13 axles, 115 t, one trip along road P14", "SPECIAL_SINGLE_TRIP",
+        (2027, 1, 12), (2027, 1, 16), 1,
+        [configuration("loaded", "Loaded", "13-axle combination", thirteen_axles(), 3.05, 4.2, 4.45)],
+        [on(f"P14-{km}", FORWARD) for km in ("0032", "0087", "0145", "0190", "0236", "0310", "0388")]),
+    "02-transformer-19-axles.json": application(
+        "2027-0014", "Transformer on a 19-axle dual-lane trailer, 220 t, one trip from road P14 to the end of road P31",
+        "SPECIAL_SINGLE_TRIP", (2027, 1, 19), (2027, 1, 30), 1,
+        [configuration("loaded", "Loaded", "19-axle dual-lane combination", nineteen_axles(), 4.9, 5.2, 4.85)],
+        [on("P14-0087", REVERSE), on("P14-0032", REVERSE)]
+        + [on(f"P31-{km}", FORWARD) for km in ("0021", "0074", "0118", "0163", "0202")]),
+    "03-excavator-9-axles.json": application(
+        "2027-0018", "Excavator on a 9-axle lowbed, 75 t out, 27 t back, twelve trips", "SPECIAL_MULTIPLE_TRIPS",
+        (2027, 1, 4), (2027, 3, 31), 12,
+        [configuration("loaded", "Loaded, outwards", "9-axle lowbed, loaded", nine_axles(60.0, 85.0, 84.0), 2.6, 3.6, 4.3, ["out"]),
+         configuration("empty", "Empty, on the way back", "9-axle lowbed, empty", nine_axles(54.0, 42.0, 21.0), 2.6, 2.75, 3.3, ["back"])],
+        [on("P14-0145", REVERSE, "out")]
+        + [on(f"P31-{km}", FORWARD, "out") for km in ("0074", "0118", "0163", "0202")]
+        + [on(f"P31-{km}", REVERSE, "back") for km in ("0202", "0163", "0118")]),
+    "04-timber-5-axles-annual.json": application(
+        "2027-0023", "Timber combination of 46 t, 5 axles, annual permit for the whole of road P14", "ROUTINE",
+        (2027, 1, 1), (2027, 12, 31), 400,
+        [configuration("loaded", "Loaded", "5-axle combination", five_axles(), 2.5, 2.55, 4.0)],
+        [on(f"P14-{km}") for km in ("0032", "0087", "0145", "0190", "0236")] + [under("P31-0118")]
+        + [on(f"P14-{km}") for km in ("0310", "0388")]),
 }

@@ -1,6 +1,6 @@
 """Writes the demo's catalogue: twelve invented truss bridges, sized as an office of their time would have.
 
-    python3 tests/oracle/demo_generate.py     writes deploy/demo/catalogue/*.json and deploy/demo/applications/*.json
+    python3 tests/oracle/demo_generate.py     writes policies, catalogue and applications under deploy/demo
 
 Each member gets the smallest section of a coarse grid that carries its factored dead load and `reserve` times the legal
 load in every lane. Dead load comes from weights per metre through the same analysis as the influence lines. Nothing here
@@ -22,11 +22,13 @@ HERE = Path(__file__).resolve().parent
 DEMO = HERE.parent.parent / "deploy" / "demo"
 ELASTIC_MODULUS_MPA = 200000
 TENSION_FACTOR = COMPRESSION_FACTOR = 0.95
+ENDS_FIXITY = 0.75  # K of members riveted at both ends, LRFD 4.6.2.5
+MOST_SLENDER = 125  # KL/r
 RIVET_KN = 66.8  # factored, 7/8 in rivet in single shear, 25 ksi on 0.601 in2
 LEGAL_FACTOR, LEGAL_IMPACT = 1.45, 1.33
 ROUNDS = 6
 MEMORY = "from memory, not recomputed"
-ROLES = {"chord": (1.15, 60), "endpost": (1.15, 60), "diagonal": (0.85, 40), "vertical": (0.85, 40)}  # r / sqrt(A), least cm2
+ROLES = {"chord": (1.15, 32), "endpost": (1.15, 32), "diagonal": (0.85, 40), "vertical": (0.85, 40)}  # r / sqrt(A), least cm2
 
 
 def sectioned(cm2):
@@ -35,7 +37,7 @@ def sectioned(cm2):
     return math.ceil(cm2 / step - 1e-9) * step
 
 
-def column_kn(cm2, radius_m, length_m, yield_mpa, k=0.75):
+def column_kn(cm2, radius_m, length_m, yield_mpa, k=ENDS_FIXITY):
     """Nominal compression resistance, kN; LRFD 6.9.4.1 with Q = 1."""
     yield_kn = cm2 * yield_mpa / 10
     euler_kn = math.pi ** 2 * ELASTIC_MODULUS_MPA * cm2 / 10 / (k * length_m / radius_m) ** 2
@@ -53,9 +55,9 @@ def role_of(member, nodes):
     return member.get("role", "diagonal")
 
 
-def radius_of(role, cm2):
-    """Radius of gyration of a built-up section of that size, m, to the millimetre."""
-    return round(ROLES[role][0] * math.sqrt(cm2 / 1e4), 3)
+def radius_of(role, cm2, length_m):
+    """Radius of gyration of a built-up section, m, to the millimetre; long members were laced deep enough."""
+    return round(max(ROLES[role][0] * math.sqrt(cm2 / 1e4), ENDS_FIXITY * length_m / MOST_SLENDER), 3)
 
 
 class UnitDesign:
@@ -144,8 +146,8 @@ class UnitDesign:
             length = self.truss.length(member)
             tension = max(self.demand(name, p)[0] for p in self.structure["planes"]) / reduction
             pressure = max(self.demand(name, p)[1] for p in self.structure["planes"]) / reduction
-            cm2 = sectioned(max(ROLES[role][1], tension / TENSION_FACTOR * 10 / self.structure["yield"]))
-            while COMPRESSION_FACTOR * column_kn(cm2, radius_of(role, cm2), length, self.structure["yield"]) < pressure:
+            cm2 = sectioned(max(ROLES[role][1], tension / TENSION_FACTOR * 10 / self.structure["yield_mpa"]))
+            while COMPRESSION_FACTOR * column_kn(cm2, radius_of(role, cm2, length), length, self.structure["yield_mpa"]) < pressure:
                 cm2 = sectioned(cm2 + 0.1)
             needed[name] = cm2
         for group in self._groups():
@@ -164,7 +166,7 @@ class UnitDesign:
                 letter = member["startNode"][0]
                 panel = min(int(member["startNode"][1:]), int(member["endNode"][1:]))
                 count = max(int(n[1:]) for n in self.nodes if n[0] == letter) + min(int(n[1:]) for n in self.nodes if n[0] == letter)
-                groups.setdefault((letter, min(panel, count - 1 - panel) // 2), []).append(name)
+                groups.setdefault((letter, min(panel, count - 1 - panel) // self.structure.get("panels_per_splice", 2)), []).append(name)
             else:
                 rising = (y2 - y1) * (x2 - x1) * ((x1 + x2) / 2 - middle)
                 sign = 0 if role == "vertical" else 1 if rising > 1e-9 else -1 if rising < -1e-9 else 0
@@ -219,10 +221,11 @@ def member_resistances(design, member, plane):
     structure, name, role = design.structure, member["name"], design.roles[member["name"]]
     cm2, loss = design.sections[name], structure.get("loss", {}).get((plane, name), 0.0)
     line, dead = design.lines[name], sum(design.dead[name][plane].values())
-    radius, length = radius_of(role, cm2), design.truss.length(member)
+    length = design.truss.length(member)
+    radius = radius_of(role, cm2, length)
     sound = cm2 * (1 - loss)
     source = structure["drawing"]
-    note = f"{cm2:.0f} cm2, F_y {structure['yield']} MPa"
+    note = f"{cm2:.0f} cm2, F_y {structure['yield_mpa']} MPa"
     if loss:
         note += f", {loss:.0%} of the area lost ({structure['loss_source']})"
     found = []
@@ -232,18 +235,18 @@ def member_resistances(design, member, plane):
         wants_tension = wants_pressure = True
     extra = {"loss": loss > 0, "included": structure.get("factors_included", False), "factored": structure.get("factored", False)}
     if wants_tension:
-        value = sound * structure["yield"] / 10
+        value = sound * structure["yield_mpa"] / 10
         found.append(resistance("TENSION", value * (TENSION_FACTOR if extra["factored"] else 1) * structure["given"], structure,
                                 factor=TENSION_FACTOR, source=f"{source}; {note}; LRFD 6.8.2.1", **extra))
         if role in structure.get("connections", ()):
-            rivets = 2 * math.ceil(structure.get("connection_level", 0.98) * TENSION_FACTOR * cm2 * structure["yield"] / 10 / RIVET_KN / 2)
+            rivets = 2 * math.ceil(structure.get("connection_level", 0.98) * TENSION_FACTOR * cm2 * structure["yield_mpa"] / 10 / RIVET_KN / 2)
             found.append(resistance("TENSION", rivets * RIVET_KN, structure, factored=True, element="connection",
                                     source=f"{source}; {rivets} rivets of 7/8 in, single shear; MBE 6A.6.12.5.1"))
     if wants_pressure:
-        value = column_kn(sound, radius, length, structure["yield"])
+        value = column_kn(sound, radius, length, structure["yield_mpa"])
         found.append(resistance("COMPRESSION", value * (COMPRESSION_FACTOR if extra["factored"] else 1) * structure["given"], structure,
                                 factor=COMPRESSION_FACTOR,
-                                source=f"{source}; {note}, KL/r {0.75 * length / radius:.0f}; LRFD 6.9.4.1", **extra))
+                                source=f"{source}; {note}, KL/r {ENDS_FIXITY * length / radius:.0f}; LRFD 6.9.4.1", **extra))
     return found
 
 
@@ -324,10 +327,20 @@ def compact_json(node, indent=0, width=150):
     return "[\n" + ",\n".join(pad + compact_json(v, indent + 2, width) for v in node) + "\n" + " " * indent + "]"
 
 
+def write_policy():
+    """Copies the built-in policy under the demo's name, marked as a demonstration; returns its text."""
+    text = (DEMO.parent / "policies" / "lrfr-permit-2013.json").read_text(encoding="utf-8")
+    for old, new in (('"policies/lrfr-permit-2013"', '"policies/ossel-demo"'), ('"title": "LRFR', '"title": "Demonstration only: LRFR'),
+                     ('"state": "POLICY_STATE_DRAFT",', '"state": "POLICY_STATE_DRAFT",\n    "demonstration": true,')):
+        assert text.count(old) == 1, old
+        text = text.replace(old, new)
+    (DEMO / "policies" / "ossel-demo.json").write_text(text, encoding="utf-8")
+    return text
+
+
 def main():
-    """Writes one file per structure and one per application."""
-    (policy_path,) = sorted((DEMO / "policies").glob("*.json"))
-    policy = Policy(json.loads(policy_path.read_text(encoding="utf-8"))["policy"])
+    """Writes the policy, one file per structure and one per application."""
+    policy = Policy(json.loads(write_policy())["policy"])
     folder = DEMO / "catalogue"
     folder.mkdir(parents=True, exist_ok=True)
     for structure in STRUCTURES:

@@ -10,7 +10,7 @@ from liveload import FORWARD, REVERSE, row_arrangements
 
 LEGAL_FACTOR = 1.45  # MBE Table 6A.4.4.2.3a-1, from memory, not recomputed
 LEAST_SHARE, MOST_SHARE = 0.30, 0.70  # of factored dead load in the capacity of a main member
-SLACK_DIAGONAL = 0.30  # a diagonal with less dead load than this part of the greatest one's is no main member
+SLACK = 0.30  # a member with less dead load than this part of the greatest of its kind is no main member
 
 
 def legal_arrangements(roadway, policy):
@@ -49,31 +49,25 @@ def legal_rating(model, roadway, policy):
     return least
 
 
-def is_main(model, name, member):
-    """Whether a member is a chord, an end post or a main diagonal."""
-    nodes = model.truss.nodes
-    if member["startNode"][0] == member["endNode"][0]:
-        return True
-    return nodes[member["startNode"]][0] != nodes[member["endNode"]][0]
-
-
 def dead_shares(model):
-    """Factored dead load over capacity: main members {(name, plane): share}, slack diagonals likewise."""
-    by_member, peak = {}, 0.0
+    """Factored dead load over capacity of chords, end posts and diagonals: main members, slack ones.
+
+    Slack members have less than SLACK of the greatest dead load of their kind: diagonals near midspan, chord panels near
+    a point of contraflexure.
+    """
+    nodes, found, peaks = model.truss.nodes, {}, {}
     members = {m["name"]: m for m in model.truss.members}
     for rated in model.senses:
         if isinstance(rated.key, tuple) or rated.numerator is None or rated.dead <= 0:
             continue
-        member = members[rated.key]
-        if not is_main(model, rated.key, member):
-            continue
-        chord = member["startNode"][0] == member["endNode"][0]
-        if not chord:
-            peak = max(peak, rated.dead)
-        by_member[rated.key, rated.plane_id] = (rated.dead / (rated.numerator + rated.dead), chord, rated.dead)
-    main = {k: s for k, (s, chord, dead) in by_member.items() if chord or dead >= SLACK_DIAGONAL * peak}
-    slack = {k: s for k, (s, chord, dead) in by_member.items() if k not in main}
-    return main, slack
+        a, b = members[rated.key]["startNode"], members[rated.key]["endNode"]
+        if nodes[a][0] == nodes[b][0]:
+            continue  # a vertical
+        kind = "chord" if a[0] == b[0] else "web"
+        peaks[kind] = max(peaks.get(kind, 0.0), rated.dead)
+        found[rated.key, rated.plane_id] = (rated.dead / (rated.numerator + rated.dead), kind, rated.dead)
+    main = {k: share for k, (share, kind, dead) in found.items() if dead >= SLACK * peaks[kind]}
+    return main, {k: share for k, (share, _, _) in found.items() if k not in main}
 
 
 def main():
@@ -95,7 +89,7 @@ def main():
             implausible |= bool(bad)
             print(f"{name[11:]:10} {unit['unitId']:8} span {model.truss.longest_span():5.1f} m  legal RF {factor:5.2f} ({effect})"
                   f"{' posted' if posted else ''}  dead share {min(shares.values()):.2f}-{max(shares.values()):.2f}"
-                  f"  slack diagonals from {min(slack.values(), default=0):.2f}  {model.faults or ''}{outside or ''}")
+                  f"  slack from {min(slack.values(), default=0):.2f}  {model.faults or ''}{outside or ''}")
     sys.exit(1 if implausible else 0)
 
 

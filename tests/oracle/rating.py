@@ -276,7 +276,8 @@ def rate_sense(model, rated, setting):
     if numerator < 0:
         return {"passes": False, "rf": None, "k": 0.0, "dead": True}
     return {"passes": passes, "rf": numerator / load if load > 0 else None,
-            "k": largest_axle_factor(terms, factor, numerator, passes), "numerator": numerator, "load": load}
+            "k": largest_axle_factor(terms, factor, numerator, passes), "numerator": numerator,
+            "load": load, "terms": terms, "factor": factor}
 
 
 def rate_rung(models, structure, policy, rung, permit_kind, trains, adtt, directions):
