@@ -87,8 +87,8 @@ def main():
             outside = {k: round(s, 2) for k, s in shares.items() if not LEAST_SHARE <= s <= MOST_SHARE}
             bad = model.faults or (not posted and factor < 1) or outside
             implausible |= bool(bad)
-            print(f"{name[11:]:10} {unit['unitId']:8} span {model.truss.longest_span():5.1f} m  legal RF {factor:5.2f} ({effect})"
-                  f"{' posted' if posted else ''}  dead share {min(shares.values()):.2f}-{max(shares.values()):.2f}"
+            print(f"{name[11:]:10} {unit['unitId']:8} span {model.truss.longest_span():5.1f} m  legal RF {factor:6.3f} ({effect})"
+                  f"{' posted' if posted else ''}  dead share {min(shares.values()):.3f}-{max(shares.values()):.3f}"
                   f"  slack from {min(slack.values(), default=0):.2f}  {model.faults or ''}{outside or ''}")
     sys.exit(1 if implausible else 0)
 

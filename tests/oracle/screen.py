@@ -2,10 +2,13 @@
 
     python3 tests/oracle/screen.py            writes tests/oracle/demo_expected.json
     python3 tests/oracle/screen.py --print    prints a table instead
+    python3 tests/oracle/screen.py --effects  prints every effect of every rung as CSV instead
 """
 
 import argparse
+import csv
 import json
+import sys
 from datetime import date
 from pathlib import Path
 
@@ -80,12 +83,31 @@ def print_table(answer):
                       f"{g.get('planeId', '')} {g.get('sense', '')[13:]} {g.get('element', '')} {','.join(r['reasons'])}")
 
 
+def print_effects(answer):
+    """Prints RF, k, numerator and denominator of every rated effect, kN."""
+    out = csv.writer(sys.stdout, lineterminator="\n")
+    out.writerow(["reference", "crossing", "structure", "rung_id", "configuration_id", "unit_id", "effect_id", "plane_id", "sense",
+                  "passes", "rating_factor", "largest_axle_factor", "numerator_kn", "denominator_kn"])
+    for application in answer["applications"]:
+        for place, crossing in enumerate(application["crossings"], start=1):
+            for rung in crossing["rungs"]:
+                for configuration, sense, result in rung.get("_rated", []):
+                    if sense.needed:
+                        out.writerow([application["reference"], place, crossing["structure"], rung["rungId"], configuration,
+                                      sense.unit_id, sense.effect_id, sense.plane_id, sense.sense, result["passes"], result["rf"],
+                                      result["k"], sense.numerator, result.get("load")])
+
+
 def main():
     """Command line."""
     parser = argparse.ArgumentParser(description=__doc__)
     parser.add_argument("--print", action="store_true", dest="table", help="print a table, write nothing")
+    parser.add_argument("--effects", action="store_true", help="print every effect as CSV, write nothing")
     arguments = parser.parse_args()
     answer = screen_demo()
+    if arguments.effects:
+        print_effects(answer)
+        return
     if arguments.table:
         print_table(answer)
         return
