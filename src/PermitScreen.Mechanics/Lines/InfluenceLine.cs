@@ -35,6 +35,7 @@ public sealed partial class InfluenceLine
             Note(ordinate);
         }
 
+        AnyJump = !left.AsSpan().SequenceEqual(right);
         (PositiveArea, NegativeArea) = Areas(xM, left, right);
 
         void Note(double ordinate)
@@ -112,6 +113,9 @@ public sealed partial class InfluenceLine
 
         return _right[k] + ((_left[k + 1] - _right[k]) * ((xM - x[k]) / (x[k + 1] - x[k])));
     }
+
+    /// <summary>Whether the line jumps anywhere.</summary>
+    internal bool AnyJump { get; }
 
     /// <summary>Whether the line jumps at a breakpoint.</summary>
     internal bool Jumps(int k) => _left[k] != _right[k];
