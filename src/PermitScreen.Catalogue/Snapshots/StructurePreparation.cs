@@ -1,0 +1,195 @@
+using System.Collections.Immutable;
+using PermitScreen.Catalogue.Lines;
+using PermitScreen.Catalogue.Records;
+using PermitScreen.Mechanics.Faults;
+using PermitScreen.Mechanics.Lines;
+using PermitScreen.Mechanics.Trusses;
+using PermitScreen.Rating.Checks;
+using PermitScreen.Rating.Structures;
+
+namespace PermitScreen.Catalogue.Snapshots;
+
+/// <summary>Turns a revision into what can be screened: lines, one rated effect per plane, and what is missing.</summary>
+public static class StructurePreparation
+{
+    /// <summary>Prepares a revision; null with faults where a truss is a mechanism or cannot be solved accurately.</summary>
+    /// <param name="record">Revision.</param>
+    /// <param name="cache">Lines known so far.</param>
+    /// <param name="faults">Takes what is wrong.</param>
+    public static PreparedStructure? Prepare(StructureRecord record, LineCache cache, FaultList faults)
+    {
+        var before = faults.Count;
+        var units = ImmutableArray.CreateBuilder<RatedUnit>();
+        var gaps = new List<Reason>(record.Gaps);
+        var notRated = ImmutableArray.CreateBuilder<UnratedEffect>();
+        var named = ImmutableArray.CreateBuilder<NamedLine>();
+        var residual = 0.0;
+        for (var u = 0; u < record.Units.Length; u++)
+        {
+            var unit = record.Units[u];
+            if (unit.Truss is not { } truss)
+            {
+                gaps.AddRange(unit.Gaps);
+                continue;
+            }
+
+            if (cache.GetOrSolve(truss, faults.At("units", u).Under("truss")) is not { } lines)
+            {
+                continue;
+            }
+
+            residual = Math.Max(residual, lines.Quality.LargestResidual);
+            var prepared = new UnitPreparation(unit, truss, lines).Of(notRated, named);
+            if (unit.Planes.Length == 2)
+            {
+                units.Add(prepared);
+            }
+            else
+            {
+                gaps.AddRange(prepared.Gaps);
+            }
+        }
+
+        if (record.Units.IsEmpty)
+        {
+            gaps.Add(new Reason(ReasonCode.DataMissing, "The structure has no superstructure unit.", "units"));
+        }
+
+        if (faults.Count > before)
+        {
+            return null;
+        }
+
+        var rated = record.Roadway is { } roadway ? new RatedStructure(roadway, units.ToImmutable(), [.. gaps]) : null;
+        return new PreparedStructure(record with { Gaps = [.. gaps] }, rated, notRated.ToImmutable(), named.ToImmutable(), residual);
+    }
+
+    private sealed class UnitPreparation(UnitRecord unit, TrussModel truss, TrussLines lines)
+    {
+        private readonly List<Reason> _gaps = [.. unit.Gaps];
+        private readonly Dictionary<TrussQuantity, InfluenceLine> _shifted = [];
+        private readonly HashSet<(TrussQuantity Quantity, string PlaneId)> _covered = [];
+
+        public RatedUnit Of(ImmutableArray<UnratedEffect>.Builder notRated, ImmutableArray<NamedLine>.Builder named)
+        {
+            var rated = ImmutableArray.CreateBuilder<RatedEffect>();
+            foreach (var effect in unit.Effects)
+            {
+                _gaps.AddRange(effect.Gaps);
+                if (effect.Quantity is not { } quantity)
+                {
+                    continue;
+                }
+
+                var line = Line(quantity);
+                named.Add(new NamedLine(unit.UnitId, effect.EffectId, effect.Description, line));
+                foreach (var plane in effect.PlaneIds)
+                {
+                    _covered.Add((quantity, plane));
+                    if (effect.NotRatedReason is { } reason)
+                    {
+                        notRated.Add(new UnratedEffect(unit.UnitId, effect.EffectId, plane, effect.Description, reason));
+                    }
+                    else if (effect.Gaps.IsEmpty)
+                    {
+                        rated.Add(Rated(effect, quantity, plane, line));
+                    }
+                }
+
+                if (effect.NotRatedReason is not null && quantity.Kind == EffectKind.VerticalReaction && line.HasNegative)
+                {
+                    _gaps.Add(new Reason(ReasonCode.DataMissing, $"The {effect.Description} can turn to uplift and must be rated in uplift; it is marked as not rated.", effect.Path));
+                }
+            }
+
+            RequireEverything();
+            var (start, end, longest) = Extent();
+            var planes = unit.Planes.Length == 2 ? unit.Planes : [new Plane("", 0), new Plane("", 1)];
+            return new RatedUnit(unit.UnitId, planes[0], planes[1], start, end, longest, rated.ToImmutable(), [.. _gaps]);
+        }
+
+        private RatedEffect Rated(EffectRecord effect, TrussQuantity quantity, string plane, InfluenceLine line) => new()
+        {
+            UnitId = unit.UnitId,
+            EffectId = effect.EffectId,
+            PlaneId = plane,
+            Description = effect.Description,
+            Kind = quantity.Kind,
+            Line = line,
+            InteriorReaction = quantity.Kind == EffectKind.VerticalReaction && IsInterior(quantity.Index),
+            Resistances = effect.Resistances,
+            DeadLoads = effect.DeadLoads,
+            System = effect.System,
+            ConditionRating = effect.ConditionRating,
+            NoHoldDown = effect.NoHoldDown,
+            Path = effect.Path,
+        };
+
+        private InfluenceLine Line(TrussQuantity quantity)
+        {
+            if (!_shifted.TryGetValue(quantity, out var line))
+            {
+                line = (quantity.Kind switch
+                {
+                    EffectKind.AxialForce => lines.Axial(quantity.Index),
+                    EffectKind.VerticalReaction => lines.ReactionY(quantity.Index),
+                    _ => lines.ReactionX(quantity.Index),
+                } ?? throw new InvalidOperationException("A record names held reactions only.")).ShiftedBy(unit.StartChainageM);
+                _shifted.Add(quantity, line);
+            }
+
+            return line;
+        }
+
+        /// <summary>Every member and every held reaction of every plane is rated, or said not to be with the reason (rule D6).</summary>
+        private void RequireEverything()
+        {
+            foreach (var plane in unit.Planes)
+            {
+                for (var m = 0; m < truss.Members.Length; m++)
+                {
+                    Require(new TrussQuantity(EffectKind.AxialForce, m), plane.PlaneId, $"member {truss.Members[m].Name}");
+                }
+
+                for (var s = 0; s < truss.Supports.Length; s++)
+                {
+                    if (truss.Supports[s].HoldsY)
+                    {
+                        Require(new TrussQuantity(EffectKind.VerticalReaction, s), plane.PlaneId, $"vertical reaction of {truss.Supports[s].Name}");
+                    }
+
+                    if (truss.Supports[s].HoldsX)
+                    {
+                        Require(new TrussQuantity(EffectKind.HorizontalReaction, s), plane.PlaneId, $"horizontal reaction of {truss.Supports[s].Name}");
+                    }
+                }
+            }
+        }
+
+        private void Require(TrussQuantity quantity, string planeId, string what)
+        {
+            if (!_covered.Contains((quantity, planeId)))
+            {
+                _gaps.Add(new Reason(ReasonCode.DataMissing, $"Plane {planeId} has no effect for {what}; list it as rated, or as not rated with the reason.", $"{unit.Path}.effects"));
+            }
+        }
+
+        private bool IsInterior(int support)
+        {
+            var x = HeldX();
+            var own = NodeX(truss.Supports[support].Node);
+            return own > x[0] && own < x[^1];
+        }
+
+        private (double StartM, double EndM, double LongestSpanM) Extent()
+        {
+            var x = HeldX();
+            var longest = x.Zip(x.Skip(1), (a, b) => b - a).DefaultIfEmpty(0).Max();
+            return (unit.StartChainageM + truss.DeckStartM, unit.StartChainageM + truss.DeckEndM, longest);
+        }
+
+        private List<double> HeldX() => [.. truss.Supports.Where(s => s.HoldsY).Select(s => NodeX(s.Node)).Order()];
+
+        private double NodeX(string name) => truss.Nodes.First(n => n.Name == name).XM;
+    }
+}
