@@ -1,0 +1,45 @@
+using Microsoft.AspNetCore.Builder;
+using Microsoft.AspNetCore.Hosting;
+using Microsoft.AspNetCore.Hosting.Server;
+using Microsoft.AspNetCore.Hosting.Server.Features;
+using Microsoft.AspNetCore.Server.Kestrel.Core;
+using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.Logging;
+using PermitScreen.Service;
+using PermitScreen.Service.Workers;
+
+namespace PermitScreen.Host;
+
+/// <summary>The composition root: builds one process of the service.</summary>
+public static class ServiceHost
+{
+    /// <summary>Builds the service; it listens once it is started.</summary>
+    /// <param name="settings">Settings.</param>
+    /// <exception cref="Service.Files.FileFaultsException">A policy is at fault.</exception>
+    /// <exception cref="FileNotFoundException">A path does not exist.</exception>
+    public static WebApplication Build(HostSettings settings)
+    {
+        var policies = PolicyLoader.Load(settings.Source.PolicyPaths);
+        var builder = WebApplication.CreateSlimBuilder();
+        builder.Logging.ClearProviders();
+        builder.Logging.AddSimpleConsole(o =>
+        {
+            o.SingleLine = true;
+            o.TimestampFormat = "yyyy-MM-ddTHH:mm:ss.fffZ ";
+            o.UseUtcTimestamp = true;
+        });
+        builder.Logging.SetMinimumLevel(settings.Quiet ? LogLevel.Warning : LogLevel.Information);
+        builder.Logging.AddFilter("Microsoft.AspNetCore", LogLevel.Warning);
+        builder.Logging.AddFilter("Grpc", LogLevel.Warning);
+        builder.WebHost.ConfigureKestrel(o => o.Listen(settings.Address, settings.Port, l => l.Protocols = HttpProtocols.Http2));
+        builder.Services.AddPermitScreen(settings.Source, policies, settings.Zone);
+        var app = builder.Build();
+        app.MapPermitScreen();
+        return app;
+    }
+
+    /// <summary>The address that a started service listens on.</summary>
+    /// <param name="app">Started service.</param>
+    public static Uri AddressOf(WebApplication app) =>
+        new(app.Services.GetRequiredService<IServer>().Features.Get<IServerAddressesFeature>()!.Addresses.First());
+}

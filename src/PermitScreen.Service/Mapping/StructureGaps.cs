@@ -1,0 +1,65 @@
+using PermitScreen.Catalogue.Snapshots;
+using PermitScreen.Rating.Checks;
+
+namespace PermitScreen.Service.Mapping;
+
+/// <summary>What would keep a structure from being assessed under any policy, though it may be kept.</summary>
+internal static class StructureGaps
+{
+    public static IEnumerable<Reason> Of(PreparedStructure prepared)
+    {
+        var record = prepared.Record;
+        if (record.State is null)
+        {
+            yield return Missing("The state of the structure is not said.", "state");
+        }
+
+        if (record.Roadway is null)
+        {
+            yield return Missing("The roadway is not said.", "roadway");
+        }
+        else if (record.Roadway.LaneCount is null)
+        {
+            yield return Missing("The number of lanes is not said; conditions with other traffic cannot be assessed.", "roadway.lane_count");
+        }
+
+        if (record.ClearanceOn is not { } clearance)
+        {
+            yield return Missing("The clearances on the structure are not said.", "clearance_on");
+        }
+        else
+        {
+            if (!clearance.Height.Stated)
+            {
+                yield return Missing("The clear height is not said.", "clearance_on.height_m");
+            }
+
+            if (!clearance.Width.Stated)
+            {
+                yield return Missing("The clear width is not said.", "clearance_on.width_m");
+            }
+        }
+
+        if (record.Inspection?.InspectedOn is null)
+        {
+            yield return Missing("The day of the last inspection is not said.", "inspection.inspected_on");
+        }
+
+        if (record.Inspection?.IntervalMonths is null)
+        {
+            yield return Missing("The inspection interval is not said.", "inspection.interval_months");
+        }
+
+        if (record.Inspection?.SuperstructureCondition is null)
+        {
+            yield return Missing("The condition of the superstructure is not said.", "inspection.superstructure_condition");
+        }
+
+        foreach (var gap in record.Gaps.Concat(prepared.Rated?.Units.SelectMany(u => u.Gaps) ?? []))
+        {
+            yield return gap;
+        }
+    }
+
+    private static Reason Missing(string message, string field) => new(ReasonCode.DataMissing, message, field);
+}

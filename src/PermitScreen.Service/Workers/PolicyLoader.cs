@@ -1,0 +1,43 @@
+using PermitScreen.Mechanics.Faults;
+using PermitScreen.Service.Files;
+using PermitScreen.Service.Mapping;
+
+namespace PermitScreen.Service.Workers;
+
+/// <summary>Reads policies from files.</summary>
+public static class PolicyLoader
+{
+    /// <summary>Every policy of the paths.</summary>
+    /// <param name="paths">Files or folders.</param>
+    /// <exception cref="FileFaultsException">Any file is at fault; all faults of all files are told.</exception>
+    public static IReadOnlyList<ShelvedPolicy> Load(IReadOnlyList<string> paths)
+    {
+        var policies = new List<ShelvedPolicy>();
+        var faulty = new List<(string File, Fault Fault)>();
+        foreach (var path in paths.SelectMany(FolderFiles.Of))
+        {
+            var faults = new FaultList();
+            if (FileSchemas.ReadPolicy(File.ReadAllText(path), faults)?.Policy is { } contract)
+            {
+                if (PolicyMapper.Map(contract, faults.Under("policy")) is { } document)
+                {
+                    contract.Etag = document.Etag;
+                    policies.Add(new ShelvedPolicy(contract, document));
+                }
+            }
+            else if (!faults.Any)
+            {
+                faults.Add("policy", "Missing; the file holds no policy.");
+            }
+
+            faulty.AddRange(faults.All.Select(f => (path, f)));
+        }
+
+        foreach (var twice in policies.GroupBy(p => p.Document.Name).Where(g => g.Count() > 1))
+        {
+            faulty.Add((string.Join(", ", paths), new Fault("policy.name", $"{twice.Key} stands in {twice.Count()} files.")));
+        }
+
+        return faulty.Count > 0 ? throw new FileFaultsException(faulty) : policies;
+    }
+}
