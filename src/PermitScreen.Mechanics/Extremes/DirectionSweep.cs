@@ -31,6 +31,8 @@ internal ref struct DirectionSweep
     /// <summary>Response just after each event.</summary>
     internal readonly ReadOnlySpan<double> After => _rented.AsSpan(5 * _count, _count);
 
+    private readonly Span<double> Responses => _rented.AsSpan(4 * _count, 2 * _count);
+
     /// <summary>Largest response of the pass.</summary>
     internal double Top { get; private set; }
 
@@ -56,17 +58,19 @@ internal ref struct DirectionSweep
             sweep.JoinJumps();
         }
 
-        foreach (var response in sweep.Before)
-        {
-            sweep.Top = Math.Max(sweep.Top, response);
-        }
-
-        foreach (var response in sweep.After)
-        {
-            sweep.Top = Math.Max(sweep.Top, response);
-        }
-
+        sweep.FindTop();
         return sweep;
+    }
+
+    /// <summary>Changes the sign of every response: the pass over the negated line, whose largest response is this one's smallest.</summary>
+    internal void Negate()
+    {
+        foreach (ref var response in Responses)
+        {
+            response = -response;
+        }
+
+        FindTop();
     }
 
     internal readonly void Return()
@@ -132,6 +136,15 @@ internal ref struct DirectionSweep
             sum += jumps[ids[i]];
             after[i] = sum;
             slope += slopes[ids[i]];
+        }
+    }
+
+    private void FindTop()
+    {
+        Top = double.NegativeInfinity;
+        foreach (var response in Responses)
+        {
+            Top = Math.Max(Top, response);
         }
     }
 

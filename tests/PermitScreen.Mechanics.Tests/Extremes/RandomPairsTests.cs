@@ -90,6 +90,14 @@ public class RandomPairsTests
                 Same(mixed, sense, directions, rules[random.Next(rules.Length)]);
             }
 
+            foreach (var axles in (AxleTrain[])[train, mixed])
+            {
+                var rule = rules[random.Next(2)];
+                var (max, min) = SweepExtremes.Both(line, axles, TravelDirections.Both, rule);
+                Assert.Equal(SweepExtremes.Of(line, axles, Sense.Max, TravelDirections.Both, rule), max);
+                Assert.Equal(SweepExtremes.Of(line, axles, Sense.Min, TravelDirections.Both, rule), min);
+            }
+
             void Same(AxleTrain axles, Sense sense, TravelDirections directions, WeighingRule rule)
             {
                 var plain = PlainExtremes.Of(line, axles, sense, directions, rule);
