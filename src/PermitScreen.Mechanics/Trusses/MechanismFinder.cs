@@ -22,6 +22,9 @@ internal static class MechanismFinder
 
     private const int MostNamed = 12;
 
+    /// <summary>Ratio of stiffnesses from which these, and not the shape of the truss, are told as the reason.</summary>
+    private const double Uneven = 1e6;
+
     /// <summary>A sentence that names the joints that move, or move most.</summary>
     internal static string Describe(TrussGeometry truss)
     {
@@ -47,6 +50,11 @@ internal static class MechanismFinder
         var moving = nullity > 0
             ? Moving(truss, free, shapes, nullity, StillExact)
             : Moving(truss, free, shapes, 1, StillNear);
+        if (nullity == 0 && UnevenStiffness(truss) is { } uneven)
+        {
+            return uneven;
+        }
+
         if (nullity == 0)
         {
             return $"the truss is nearly a mechanism and cannot be solved accurately: {moving} move most";
@@ -54,6 +62,16 @@ internal static class MechanismFinder
 
         var whole = HoldsTheWhole(truss) ? "" : "; its supports do not hold it as a whole";
         return $"the truss is a mechanism: {moving} can move{whole}";
+    }
+
+    private static string? UnevenStiffness(TrussGeometry truss)
+    {
+        var order = Enumerable.Range(0, truss.Stiffness.Length).OrderBy(m => truss.Stiffness[m]).ToArray();
+        var (softest, stiffest) = (order[0], order[^1]);
+        var ratio = truss.Stiffness[stiffest] / truss.Stiffness[softest];
+        return ratio < Uneven ? null : string.Create(
+            CultureInfo.InvariantCulture,
+            $"the truss cannot be solved accurately: the stiffness E·A/L of member '{truss.Model.Members[stiffest].Name}' is {ratio:E1} times that of member '{truss.Model.Members[softest].Name}'");
     }
 
     private static Matrix<double> Lengthenings(TrussGeometry truss, int[] free)

@@ -67,9 +67,10 @@ public sealed class TrussLines
             && quality.LargestCorrection <= AccuracyLimit
             && (!redundant || solution.ElasticRounding <= AccuracyLimit)))
         {
-            faults.Add("", string.Create(
-                CultureInfo.InvariantCulture,
-                $"{MechanismFinder.Describe(truss)} (joint '{model.Nodes[solution.WorstJoint].Name}' lacks {quality.LargestEquilibriumError:E1} of the unit load)"));
+            var how = quality.LargestEquilibriumError <= EquilibriumLimit
+                ? string.Create(CultureInfo.InvariantCulture, $"forces are uncertain by {Math.Max(quality.LargestCorrection, solution.ElasticRounding):E1} of the largest")
+                : string.Create(CultureInfo.InvariantCulture, $"joint '{model.Nodes[solution.WorstJoint].Name}' lacks {quality.LargestEquilibriumError:E1} of the unit load");
+            faults.Add("", $"{MechanismFinder.Describe(truss)} ({how})");
             return null;
         }
 

@@ -46,6 +46,15 @@ public class MechanismTests
         Assert.Contains("do not hold it as a whole", Refused(sketch).Message, StringComparison.Ordinal);
     }
 
+    /// <summary>A redundant truss whose forces hang on digits that doubles do not have is refused for its stiffnesses, not for its shape.</summary>
+    [Fact]
+    public void Stiffnesses_too_uneven_to_solve_are_named()
+    {
+        var crossed = ChordTruss.Of([6, 6, 6, 6], [7, 7, 7, 7, 7], [.. Enumerable.Repeat(Diagonal.Crossed, 4)]);
+        var fault = Refused(crossed.Sketch(m => m % 2 == 0 ? 1e-6 : 1e6));
+        Assert.Contains("the stiffness E·A/L of member '", fault.Message, StringComparison.Ordinal);
+    }
+
     private static Fault Refused(TrussSketch sketch)
     {
         var faults = new FaultList();
