@@ -1,4 +1,5 @@
 using System.Buffers;
+using System.Numerics;
 using PermitScreen.Mechanics.Lines;
 
 namespace PermitScreen.Mechanics.Extremes;
@@ -139,13 +140,29 @@ internal ref struct DirectionSweep
         }
     }
 
+    /// <summary>Vectors pay here: the largest of many numbers does not depend on the order in which they are compared.</summary>
     private void FindTop()
     {
-        Top = double.NegativeInfinity;
-        foreach (var response in Responses)
+        var responses = Responses;
+        var top = double.NegativeInfinity;
+        var lanes = new Vector<double>(top);
+        var i = 0;
+        for (; i + Vector<double>.Count <= responses.Length; i += Vector<double>.Count)
         {
-            Top = Math.Max(Top, response);
+            lanes = Vector.Max(lanes, new Vector<double>(responses[i..]));
         }
+
+        for (; i < responses.Length; i++)
+        {
+            top = Math.Max(top, responses[i]);
+        }
+
+        for (var lane = 0; lane < Vector<double>.Count; lane++)
+        {
+            top = Math.Max(top, lanes[lane]);
+        }
+
+        Top = top;
     }
 
     private void Judge(scoped in Bends bends, AxleTrain train)
