@@ -124,7 +124,8 @@ STRUCTURES = [
         loss={("south", "L1L2"): 0.20, ("south", "L2L3"): 0.16, ("south", "L3L4"): 0.16, ("south", "U1L2"): 0.12,
               ("south", "U2L2"): 0.10},
         loss_source="thickness survey of August 2026",
-        condition={("south", "L1L2"): 4, ("south", "L2L3"): 4},
+        condition={("south", "L1L2"): 4, ("south", "L2L3"): 4, ("south", "L3L4"): 5, ("south", "U1L2"): 5,
+                   ("south", "U2L2"): 5},
         built=1928, yield_mpa=207, reserve={"all": 1.02}),
     structure(
         "P14-0236", "Marl Reach Bridge",

@@ -28,11 +28,11 @@ public sealed record EffectRecord
     /// <summary>Dead loads, where rated.</summary>
     public ImmutableArray<DeadLoad> DeadLoads { get; init; } = [];
 
-    /// <summary>Kind of member, the effect's own or the unit's.</summary>
-    public SystemKind? System { get; init; }
+    /// <summary>Kind of member for the system factor, the effect's own and its unit's.</summary>
+    public Stated<SystemKind> System { get; init; }
 
-    /// <summary>Condition rating, the effect's own or the structure's.</summary>
-    public int? ConditionRating { get; init; }
+    /// <summary>Condition rating 0 to 9, the effect's own and its structure's.</summary>
+    public Stated<int> Condition { get; init; }
 
     /// <summary>Whether the catalogue states that a bearing has no hold-down.</summary>
     public bool NoHoldDown { get; init; }

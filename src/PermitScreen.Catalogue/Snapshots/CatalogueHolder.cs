@@ -13,6 +13,10 @@ public sealed class CatalogueHolder : ICatalogue
     public Task<CatalogueSnapshot> CurrentAsync(CancellationToken cancellation) =>
         _newest is { } newest ? Task.FromResult(newest) : _first.Task.WaitAsync(cancellation);
 
+    /// <summary>There will be no snapshot: calls that wait are told so.</summary>
+    /// <param name="reason">Why.</param>
+    public void Refuse(Exception reason) => _first.TrySetException(new CatalogueUnavailableException(reason));
+
     /// <summary>Makes a snapshot the newest one.</summary>
     /// <param name="snapshot">Snapshot.</param>
     public void Publish(CatalogueSnapshot snapshot)

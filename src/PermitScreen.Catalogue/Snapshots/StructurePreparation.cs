@@ -120,7 +120,7 @@ public static class StructurePreparation
             Resistances = effect.Resistances,
             DeadLoads = effect.DeadLoads,
             System = effect.System,
-            ConditionRating = effect.ConditionRating,
+            Condition = effect.Condition,
             NoHoldDown = effect.NoHoldDown,
             Path = effect.Path,
         };

@@ -39,31 +39,13 @@ public static class Capacities
 
         var conditionIncluded = resistance.IncludesConditionFactor == true;
         var lossInstead = resistance.IncludesMeasuredLoss == true && !rules.ConditionFactorOnMeasuredLoss;
-        var condition = 1.0;
-        if (!conditionIncluded && !lossInstead)
+        if (effect.Condition.Own is null && HasMeasuredLoss(effect))
         {
-            if (effect.ConditionRating is { } rating)
-            {
-                condition = rules.ConditionFactorOf(rating);
-            }
-            else
-            {
-                reasons.Add(new Reason(ReasonCode.DataMissing, $"No condition rating for {effect.Description} ({effect.PlaneId}): neither the effect nor the structure's inspection states one.", $"{effect.Path}.rated.condition_rating"));
-            }
+            Missing("includes_measured_loss", "A member with measured loss states its own condition rating, and this one does not");
         }
 
-        var system = 1.0;
-        if (resistance.IncludesSystemFactor != true)
-        {
-            if (effect.System is not { } kind)
-            {
-                reasons.Add(new Reason(ReasonCode.DataMissing, $"No kind of member for the system factor of {effect.Description} ({effect.PlaneId}).", $"{effect.Path}.rated.system"));
-            }
-            else if (!rules.SystemFactors.TryGetValue(kind, out system))
-            {
-                reasons.Add(new Reason(ReasonCode.DataMissing, $"The policy has no system factor for {kind}.", "policy.capacity_rules.system_factors"));
-            }
-        }
+        var condition = conditionIncluded || lossInstead ? 1.0 : ConditionFactor(effect, rules, reasons);
+        var system = resistance.IncludesSystemFactor == true ? 1.0 : SystemFactor(effect, rules, reasons);
 
         if (reasons.Count > before)
         {
@@ -92,6 +74,51 @@ public static class Capacities
                 Missing(field, $"It is not said {what}");
             }
         }
+    }
+
+    /// <summary>
+    /// What an effect states of its own may not be less favourable than what stands for the whole, measured loss excepted:
+    /// otherwise an own statement that got lost would quietly be replaced by a better one.
+    /// </summary>
+    private static double ConditionFactor(RatedEffect effect, CapacityRules rules, List<Reason> reasons)
+    {
+        if (effect.Condition.Value is not { } rating)
+        {
+            reasons.Add(new Reason(ReasonCode.DataMissing, $"No condition rating for {effect.Description} ({effect.PlaneId}): neither the effect nor the structure's inspection states one.", $"{effect.Path}.rated.condition_rating"));
+            return 1.0;
+        }
+
+        var factor = rules.ConditionFactorOf(rating);
+        if (!HasMeasuredLoss(effect) && effect.Condition is { Own: not null, OfWhole: { } whole } && factor < rules.ConditionFactorOf(whole))
+        {
+            reasons.Add(new Reason(ReasonCode.DataMissing, FormattableString.Invariant($"{effect.Description} ({effect.PlaneId}) is rated {rating} in condition, its superstructure {whole}: the superstructure's rating is that of its worst member, or the member's loss is measured."), "inspection.superstructure_condition"));
+        }
+
+        return factor;
+    }
+
+    private static bool HasMeasuredLoss(RatedEffect effect) => effect.Resistances.Any(r => r.IncludesMeasuredLoss == true);
+
+    private static double SystemFactor(RatedEffect effect, CapacityRules rules, List<Reason> reasons)
+    {
+        if (effect.System.Value is not { } kind)
+        {
+            reasons.Add(new Reason(ReasonCode.DataMissing, $"No kind of member for the system factor of {effect.Description} ({effect.PlaneId}).", $"{effect.Path}.rated.system"));
+            return 1.0;
+        }
+
+        if (!rules.SystemFactors.TryGetValue(kind, out var factor))
+        {
+            reasons.Add(new Reason(ReasonCode.DataMissing, $"The policy has no system factor for {kind}.", "policy.capacity_rules.system_factors"));
+            return 1.0;
+        }
+
+        if (effect.System is { Own: not null, OfWhole: { } whole } && rules.SystemFactors.TryGetValue(whole, out var ofWhole) && factor < ofWhole)
+        {
+            reasons.Add(new Reason(ReasonCode.DataMissing, $"{effect.Description} ({effect.PlaneId}) is of a less favourable kind ({kind}) than its unit ({whole}): the unit states the least favourable kind of its members.", $"{effect.Path}.rated.system"));
+        }
+
+        return factor;
     }
 
     /// <summary>The capacity in uplift of a bearing without hold-down: 0 (rule D6).</summary>

@@ -33,11 +33,11 @@ public sealed class RatedEffect
     /// <summary>Dead loads as stated.</summary>
     public ImmutableArray<DeadLoad> DeadLoads { get; init; } = [];
 
-    /// <summary>Kind of member; null where neither effect nor unit says.</summary>
-    public SystemKind? System { get; init; }
+    /// <summary>Kind of member for the system factor, the effect's own and its unit's.</summary>
+    public Stated<SystemKind> System { get; init; }
 
-    /// <summary>Condition rating 0 to 9; null where neither effect nor structure says.</summary>
-    public int? ConditionRating { get; init; }
+    /// <summary>Condition rating 0 to 9, the effect's own and its structure's.</summary>
+    public Stated<int> Condition { get; init; }
 
     /// <summary>For a vertical reaction: there is no hold-down, so that its uplift capacity is 0 (rule D6).</summary>
     public bool NoHoldDown { get; init; }

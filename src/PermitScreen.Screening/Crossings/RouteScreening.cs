@@ -119,7 +119,7 @@ public static class RouteScreening
         // A rung that fails must not hide that another one could not be assessed.
         return ladder.Reported is { } reported
             ? reported.Reasons.Concat(ladder.Rungs.Where(r => r.Outcome == RungOutcome.NotAssessed).SelectMany(r => r.Reasons))
-            : new[] { new Reason(ReasonCode.NoRungAvailable, "No travel conditions of the policy are available to this permit on this structure.") }
-                .Concat(ladder.Rungs.SelectMany(r => r.Reasons));
+            : [new Reason(ReasonCode.NoRungAvailable, "No travel conditions of the policy are available to this permit on this structure: "
+                + string.Join(" ", ladder.Rungs.Select(r => $"{r.Rung.RungId}: {string.Join(" ", r.Reasons.Select(x => x.Message))}")))];
     }
 }

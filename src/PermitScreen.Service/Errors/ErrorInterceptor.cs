@@ -1,6 +1,7 @@
 using Grpc.Core;
 using Grpc.Core.Interceptors;
 using Microsoft.Extensions.Logging;
+using PermitScreen.Catalogue.Snapshots;
 
 namespace PermitScreen.Service.Errors;
 
@@ -25,6 +26,10 @@ public sealed partial class ErrorInterceptor(ILogger<ErrorInterceptor> logger) :
             throw context.Deadline <= TimeProvider.System.GetUtcNow().UtcDateTime
                 ? new RpcException(new Status(StatusCode.DeadlineExceeded, "The deadline passed before the answer was complete; no verdict was given."))
                 : new RpcException(new Status(StatusCode.Cancelled, "The call was cancelled; no verdict was given."));
+        }
+        catch (CatalogueUnavailableException error)
+        {
+            throw new RpcException(new Status(StatusCode.Unavailable, $"{error.Message} No verdict was given; the service's log says why."));
         }
 #pragma warning disable CA1031 // The last line of defence: nothing of the inside may leak, and every failure must be found again in the log.
         catch (Exception error)

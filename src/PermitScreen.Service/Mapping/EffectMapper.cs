@@ -20,31 +20,8 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
 
     /// <summary>All effects; meaningless where faults were added.</summary>
     /// <param name="unitFaults">Faults of the unit.</param>
-    /// <param name="unitGaps">Takes gaps of the unit.</param>
-    public ImmutableArray<EffectRecord> Map(FaultList unitFaults, List<Reason> unitGaps)
-    {
-        AllOrNone(unitGaps, r => r.HasConditionRating, "condition_rating", "condition rating");
-        AllOrNone(unitGaps, r => r.System != C.SystemKind.Unspecified, "system", "kind of member for the system factor");
-        return [.. unit.Effects.Select((e, i) => Effect(e, FormattableString.Invariant($"{path}.effects[{i}]"), unitFaults.At("effects", i)))];
-    }
-
-    /// <summary>
-    /// What single effects may state instead of the whole unit is stated by all rated effects or by none: otherwise a value that
-    /// got lost would quietly be replaced by the more favourable one of the whole.
-    /// </summary>
-    private void AllOrNone(List<Reason> gaps, Func<C.Rated, bool> states, string field, string words)
-    {
-        var rated = unit.Effects.Where(e => e.RatingCase == C.Effect.RatingOneofCase.Rated).ToList();
-        var stating = rated.Count(e => states(e.Rated));
-        if (stating > 0 && stating < rated.Count)
-        {
-            var without = rated.First(e => !states(e.Rated));
-            gaps.Add(new Reason(
-                ReasonCode.DataMissing,
-                $"{stating} of {rated.Count} rated effects state their own {words}; all of them must, or none ({without.EffectId} does not).",
-                FormattableString.Invariant($"{path}.effects[{unit.Effects.IndexOf(without)}].rated.{field}")));
-        }
-    }
+    public ImmutableArray<EffectRecord> Map(FaultList unitFaults) =>
+        [.. unit.Effects.Select((e, i) => Effect(e, FormattableString.Invariant($"{path}.effects[{i}]"), unitFaults.At("effects", i)))];
 
     private EffectRecord Effect(C.Effect effect, string effectPath, FaultList faults)
     {
@@ -101,8 +78,8 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
         {
             Resistances = resistances,
             DeadLoads = DeadLoads(rated, record.Path, faults, gaps),
-            System = rated.System.ToDomain() ?? unit.Truss.System.ToDomain(),
-            ConditionRating = condition ?? structureCondition,
+            System = new Stated<SystemKind>(rated.System.ToDomain(), unit.Truss.System.ToDomain()),
+            Condition = new Stated<int>(condition, structureCondition),
             NoHoldDown = noHoldDown,
             Gaps = [.. gaps],
         };
@@ -145,7 +122,8 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
             }
         }
 
-        if (loads.Any(l => l.Component == DeadLoadComponent.Dc) && loads.Any(l => l.Component is DeadLoadComponent.Dc1 or DeadLoadComponent.Dc2))
+        var dcAmount = rated.DeadLoads.Any(l => l.Component == C.DeadLoadComponent.Dc && l.AmountCase == C.DeadLoadValue.AmountOneofCase.ForceKn);
+        if (dcAmount && loads.Any(l => l.Component is DeadLoadComponent.Dc1 or DeadLoadComponent.Dc2))
         {
             faults.Add("dead_loads", "DC stands beside its stages DC1 or DC2 and would count twice; give one or the other.");
         }

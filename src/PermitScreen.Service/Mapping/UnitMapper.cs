@@ -33,7 +33,7 @@ internal static class UnitMapper
 
         var truss = TrussMapper.Model(unit.Truss, path, faults.Under("truss"), gaps);
         var planes = TrussMapper.Planes(unit.Truss, path, faults.Under("truss"), gaps);
-        var effects = new EffectMapper(unit, path, structureCondition).Map(faults, gaps);
+        var effects = new EffectMapper(unit, path, structureCondition).Map(faults);
         return new UnitRecord
         {
             UnitId = unit.UnitId,

@@ -57,6 +57,7 @@ public sealed partial class CatalogueWorker(
         catch (Exception error) when (error is FileFaultsException or IOException or UnauthorizedAccessException)
         {
             failure.Reason = error;
+            holder.Refuse(error);
             LogRefused(logger, error.Message);
             lifetime.StopApplication();
         }
