@@ -12,6 +12,7 @@ namespace PermitScreen.Rating.Checks;
 /// <param name="LiveLoadFactor">Live-load factor.</param>
 /// <param name="FactoredKn">Product, kN.</param>
 /// <param name="Position">Where the load stands; null for a lane load.</param>
+/// <param name="SideMatters">Whether an axle stands at a jump of the line, so that the position's side is part of the answer.</param>
 /// <param name="AxlesOnDeck">Axles on the deck, counted from 1 at the lead axle.</param>
 /// <param name="CentreLateralM">Lateral position of its centre, m.</param>
 /// <param name="FactorNote">How the live-load factor was found.</param>
@@ -24,6 +25,7 @@ public sealed record LiveLoadArithmetic(
     double LiveLoadFactor,
     double FactoredKn,
     TrainPosition? Position,
+    bool SideMatters,
     ImmutableArray<int> AxlesOnDeck,
     double CentreLateralM,
     string FactorNote);

@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using PermitScreen.Mechanics.Extremes;
+using PermitScreen.Mechanics.Lines;
 using PermitScreen.Rating.Checks;
 using PermitScreen.Rating.Lateral;
 using PermitScreen.Rating.Structures;
@@ -98,7 +99,7 @@ public sealed class ArrangedLoad
             var share = Math.Abs(Shares.Of(_load.Unit, _effect.PlaneId, _arrangement.PermitCentreM));
             terms.Add(new LiveLoadArithmetic(
                 FormattableString.Invariant($"uniform load of {_laneKnPerM:0.###} kN/m in the permit's lane, on the adverse areas, without allowance"),
-                _laneKnPerM * (_laneArea / share), share, Presence, 0, factor, Presence * factor * LaneKn, null, [], _arrangement.PermitCentreM, factorNote));
+                _laneKnPerM * (_laneArea / share), share, Presence, 0, factor, Presence * factor * LaneKn, null, false, [], _arrangement.PermitCentreM, factorNote));
         }
 
         foreach (var (vehicle, allowance, centre) in _others)
@@ -113,6 +114,12 @@ public sealed class ArrangedLoad
         return terms.ToImmutable();
     }
 
+    private bool SideMatters(TrainPosition position, AxleTrain train)
+    {
+        var other = position with { Side = position.Side == Side.Before ? Side.After : Side.Before };
+        return Response.At(_effect.Line, train, position, Sense.Max, WeighingRule.None) != Response.At(_effect.Line, train, other, Sense.Max, WeighingRule.None);
+    }
+
     private LiveLoadArithmetic Term(
         string description, VehicleEffect vehicle, AxleTrain train, double allowance, double factor, double centreM, string note) =>
         new(
@@ -124,6 +131,7 @@ public sealed class ArrangedLoad
             factor,
             Presence * factor * vehicle.SharedKn * (1 + allowance),
             vehicle.Position,
+            vehicle.Position is { } place && SideMatters(place, train),
             vehicle.Position is { } position ? AxlesOnDeck.Of(train, position, _load.Unit.DeckStartM, _load.Unit.DeckEndM) : [],
             centreM,
             note);

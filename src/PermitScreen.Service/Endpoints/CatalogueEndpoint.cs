@@ -11,8 +11,9 @@ namespace PermitScreen.Service.Endpoints;
 /// <summary>CatalogueService: reads and checks structures, lists their influence lines. Changing them comes with a catalogue that is kept in a database.</summary>
 /// <param name="catalogue">Catalogue.</param>
 /// <param name="shelf">Structures as they were read.</param>
+/// <param name="policies">Policies, which say what must be stated.</param>
 /// <param name="lines">Lines known so far.</param>
-public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf, LineCache lines) : CatalogueService.CatalogueServiceBase
+public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf, PolicyShelf policies, LineCache lines) : CatalogueService.CatalogueServiceBase
 {
     private const int DefaultStructures = 50;
     private const int DefaultLines = 200;
@@ -51,7 +52,7 @@ public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf
         response.Faults.AddRange(faults.All.Select(ReasonWriter.Write));
         if (prepared is not null)
         {
-            response.Gaps.AddRange(StructureGaps.Of(prepared).Select(ReasonWriter.WriteGap));
+            response.Gaps.AddRange(StructureGaps.Of(prepared).Concat(StructureGaps.Under(policies.All, prepared)).Select(ReasonWriter.WriteGap));
             response.EffectCount = prepared.Lines.Length;
         }
 
@@ -68,7 +69,7 @@ public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf
             .ToList();
         if (wanted.Count == 0 && (request.UnitId.Length > 0 || request.EffectId.Length > 0))
         {
-            throw BadRequests.NotFound("permitscreen.dev/InfluenceLine", $"{request.Parent} {request.UnitId} {request.EffectId}".TrimEnd(), "The structure has no such unit or effect.");
+            throw BadRequests.NotFound("permitscreen.dev/InfluenceLine", $"{request.Parent} {request.UnitId} {request.EffectId}".TrimEnd(), Near(structure.Lines.Select(l => l.EffectId), request.EffectId));
         }
 
         var (start, count) = Pages.Read(request.HasPageSize, request.PageSize, request.PageToken, DefaultLines, MostPerPage, wanted.Count);
@@ -85,6 +86,15 @@ public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf
 
     /// <inheritdoc/>
     public override Task<DeleteStructureResponse> DeleteStructure(DeleteStructureRequest request, ServerCallContext context) => throw FromFiles();
+
+    private static string Near(IEnumerable<string> effects, string wanted)
+    {
+        var known = effects.Distinct().ToList();
+        var near = known.Where(e => wanted.Length > 0 && e.StartsWith(wanted, StringComparison.OrdinalIgnoreCase)).ToList();
+        return near.Count > 0
+            ? $"Did you mean {string.Join(" or ", near)}?"
+            : Spelling.Nearest(known, wanted) is { } one ? $"Did you mean {one}?" : $"Its effects are {string.Join(", ", known)}.";
+    }
 
     private static string Name(string name, string field)
     {

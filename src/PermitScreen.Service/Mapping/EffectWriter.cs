@@ -104,7 +104,7 @@ internal static class EffectWriter
         {
             LeadChainageM = position.LeadM,
             Direction = position.Direction.ToContract(),
-            Side = position.Side.ToContract(),
+            Side = load.SideMatters ? position.Side.ToContract() : C.Side.Unspecified,
             CentreLateralM = load.CentreLateralM,
         };
         written.AxlesOnStructure.AddRange(load.AxlesOnDeck);

@@ -1,5 +1,7 @@
 using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Rating.Checks;
+using PermitScreen.Rating.Ladder;
+using PermitScreen.Rating.Structures;
 
 namespace PermitScreen.Service.Mapping;
 
@@ -58,6 +60,28 @@ internal static class StructureGaps
         foreach (var gap in record.Gaps.Concat(prepared.Rated?.Units.SelectMany(u => u.Gaps) ?? []))
         {
             yield return gap;
+        }
+    }
+
+    /// <summary>What a policy asks for and rated effects do not state.</summary>
+    public static IEnumerable<Reason> Under(IEnumerable<ShelvedPolicy> policies, PreparedStructure prepared)
+    {
+        foreach (var policy in policies)
+        {
+            var reasons = new List<Reason>();
+            foreach (var effect in prepared.Rated?.Units.SelectMany(u => u.Effects) ?? [])
+            {
+                DeadLoads.Of(effect, effect.Kind.PositiveSense(), policy.Document.Policy, reasons);
+                foreach (var resistance in effect.Resistances.Where(r => Capacities.Fits(r, policy.Document.Policy)))
+                {
+                    Capacities.Of(effect, resistance, policy.Document.Policy, reasons);
+                }
+            }
+
+            foreach (var reason in reasons.Distinct())
+            {
+                yield return reason with { Message = $"Under {policy.Document.Name}: {reason.Message}" };
+            }
         }
     }
 

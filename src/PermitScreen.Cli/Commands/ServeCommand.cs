@@ -1,0 +1,48 @@
+using System.CommandLine;
+using System.Net;
+using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.Hosting;
+using PermitScreen.Host;
+using PermitScreen.Service.Workers;
+
+namespace PermitScreen.Cli.Commands;
+
+/// <summary>Runs the service.</summary>
+internal static class ServeCommand
+{
+    private const int DefaultPort = 5080;
+
+    public static Command Create()
+    {
+        var catalogue = new Option<string[]>("--catalogue") { Description = "Files or folders of structures.", AllowMultipleArgumentsPerToken = true, Required = true };
+        var policies = new Option<string[]>("--policies") { Description = "Files or folders of policies.", AllowMultipleArgumentsPerToken = true, Required = true };
+        var address = new Option<string>("--address") { Description = "Address to listen on. Anything but the loopback address needs a proxy with TLS and sign-on before it.", DefaultValueFactory = _ => "127.0.0.1" };
+        var port = new Option<int>("--port") { Description = "Port for gRPC (HTTP/2 without TLS).", DefaultValueFactory = _ => DefaultPort };
+        var zone = new Option<string>("--zone") { Description = "The authority's time zone, for instance Europe/Lisbon; its civil date is the as-of date where a caller states none.", DefaultValueFactory = _ => "UTC" };
+        var command = new Command("serve", "Run the service on a catalogue and policies read from files.") { catalogue, policies, address, port, zone };
+        command.SetAction(async (parsed, cancellation) =>
+        {
+            var settings = new HostSettings
+            {
+                Source = new CatalogueSource(parsed.GetValue(catalogue)!, parsed.GetValue(policies)!),
+                Address = IPAddress.TryParse(parsed.GetValue(address), out var ip) ? ip : throw new BadInputException($"--address is an IP address; found \"{parsed.GetValue(address)}\"."),
+                Port = parsed.GetValue(port) is var p and >= 0 and <= 65535 ? p : throw new BadInputException("--port is a number from 0 to 65535."),
+                Zone = TimeZoneInfo.TryFindSystemTimeZoneById(parsed.GetValue(zone)!, out var found) ? found : throw new BadInputException($"There is no time zone \"{parsed.GetValue(zone)}\"; give a name such as Europe/Lisbon."),
+            };
+            await using var app = ServiceHost.Build(settings);
+            try
+            {
+                await app.StartAsync(cancellation);
+            }
+            catch (IOException error) when (error.InnerException is Microsoft.AspNetCore.Connections.AddressInUseException)
+            {
+                throw new BadInputException(FormattableString.Invariant($"Port {settings.Port} is in use; give another one with --port."));
+            }
+
+            Console.Out.WriteLine($"Listening at {ServiceHost.AddressOf(app)} (gRPC, HTTP/2 without TLS). Stop with Ctrl-C.");
+            await app.WaitForShutdownAsync(cancellation);
+            return app.Services.GetRequiredService<StartFailure>().Reason is null ? ExitCodes.Passed : ExitCodes.BadInput;
+        });
+        return command;
+    }
+}

@@ -1,0 +1,109 @@
+using System.CommandLine;
+using System.Net.Sockets;
+using Grpc.Core;
+using Grpc.Net.Client;
+using Microsoft.AspNetCore.Builder;
+using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.Hosting;
+using PermitScreen.Catalogue.Snapshots;
+using PermitScreen.Contracts.V1;
+using PermitScreen.Host;
+using PermitScreen.Service.Workers;
+
+namespace PermitScreen.Cli.Connection;
+
+/// <summary>A connection to a service that runs already, or to one that this command starts for itself.</summary>
+internal sealed class ServiceConnection : IAsyncDisposable
+{
+    private const int LargestMessageBytes = 256 * 1024 * 1024;
+    private readonly WebApplication? _own;
+    private readonly GrpcChannel _channel;
+    private readonly TimeSpan _timeout;
+
+    private ServiceConnection(WebApplication? own, Uri address, TimeSpan timeout)
+    {
+        _own = own;
+        _timeout = timeout;
+        Address = address;
+        _channel = GrpcChannel.ForAddress(address, new GrpcChannelOptions { MaxReceiveMessageSize = LargestMessageBytes });
+    }
+
+    public Uri Address { get; }
+
+    public ScreeningService.ScreeningServiceClient Screening => new(_channel);
+
+    public CatalogueService.CatalogueServiceClient Catalogue => new(_channel);
+
+    public PolicyService.PolicyServiceClient Policies => new(_channel);
+
+    /// <summary>Opens what the options ask for.</summary>
+    public static async Task<ServiceConnection> OpenAsync(ServiceOptions options, ParseResult parsed, CancellationToken cancellation)
+    {
+        var timeout = parsed.GetValue(options.Timeout);
+        if (timeout is not (> 0 and < 86400))
+        {
+            throw new BadInputException("--timeout is a number of seconds greater than 0 and below 86400.");
+        }
+
+        var server = parsed.GetValue(options.Server);
+        var catalogue = parsed.GetValue(options.Catalogue) ?? [];
+        var policies = parsed.GetValue(options.Policies) ?? [];
+        if (server is not null)
+        {
+            if (catalogue.Length > 0 || policies.Length > 0)
+            {
+                throw new BadInputException("--server names a running service, which has its own catalogue and policies; leave out --catalogue and --policies.");
+            }
+
+            return server.IsAbsoluteUri && server.Scheme is "http" or "https"
+                ? new ServiceConnection(null, server, TimeSpan.FromSeconds(timeout))
+                : throw new BadInputException($"--server is an address such as http://127.0.0.1:5080; found {server}.");
+        }
+
+        return await StartAsync(SourceOf(catalogue, policies), 0, TimeSpan.FromSeconds(timeout), cancellation);
+    }
+
+    /// <summary>Starts a service of this process and waits until its catalogue is ready.</summary>
+    public static async Task<ServiceConnection> StartAsync(CatalogueSource source, int port, TimeSpan timeout, CancellationToken cancellation)
+    {
+        var app = ServiceHost.Build(new HostSettings { Source = source, Port = port, Quiet = true });
+        try
+        {
+            await app.StartAsync(cancellation);
+            await app.Services.GetRequiredService<ICatalogue>().CurrentAsync(cancellation);
+            return new ServiceConnection(app, ServiceHost.AddressOf(app), timeout);
+        }
+        catch (CatalogueUnavailableException error)
+        {
+            await app.DisposeAsync();
+            throw error.InnerException ?? error;
+        }
+        catch (IOException error) when (error.InnerException is Microsoft.AspNetCore.Connections.AddressInUseException or SocketException)
+        {
+            await app.DisposeAsync();
+            throw new BadInputException(FormattableString.Invariant($"Port {port} is in use; give another one with --port."));
+        }
+    }
+
+    /// <summary>What a command reads where the user names nothing: the demo.</summary>
+    public static CatalogueSource SourceOf(string[] catalogue, string[] policies) => new(
+        catalogue.Length > 0 ? catalogue : [Path.Combine(DemoFolder.Find(), "catalogue")],
+        policies.Length > 0 ? policies : [Path.Combine(DemoFolder.Find(), "policies")]);
+
+    /// <summary>Deadline and cancellation of a call.</summary>
+    public CallOptions Call(CancellationToken cancellation) =>
+        new(deadline: TimeProvider.System.GetUtcNow().UtcDateTime + _timeout, cancellationToken: cancellation);
+
+    /// <summary>Waits until the service of this process is stopped.</summary>
+    public Task WaitAsync(CancellationToken cancellation) =>
+        _own is null ? Task.CompletedTask : Task.WhenAny(_own.WaitForShutdownAsync(cancellation), Task.Delay(Timeout.Infinite, cancellation));
+
+    public async ValueTask DisposeAsync()
+    {
+        _channel.Dispose();
+        if (_own is not null)
+        {
+            await _own.DisposeAsync();
+        }
+    }
+}

@@ -1,0 +1,31 @@
+using Google.Rpc;
+using Grpc.Core;
+
+namespace PermitScreen.Cli.Printing;
+
+/// <summary>Prints what a service refused, field by field.</summary>
+internal static class ErrorPrinter
+{
+    /// <summary>Prints an error, and tells its exit code.</summary>
+    /// <param name="error">Error of a call.</param>
+    public static async Task<int> PrintAsync(RpcException error)
+    {
+        if (error.GetRpcStatus()?.GetDetail<BadRequest>() is { } details)
+        {
+            await Console.Error.WriteLineAsync(FormattableString.Invariant($"Not valid, {details.FieldViolations.Count} faults:"));
+            foreach (var violation in details.FieldViolations)
+            {
+                await Console.Error.WriteLineAsync($"  {violation.Field}: {violation.Description}");
+            }
+
+            return ExitCodes.BadInput;
+        }
+
+        await Console.Error.WriteLineAsync(error.StatusCode switch
+        {
+            StatusCode.Unavailable when error.Status.DebugException is not null => $"The service cannot be reached: {error.Status.Detail}",
+            _ => error.Status.Detail,
+        });
+        return error.StatusCode is StatusCode.NotFound or StatusCode.FailedPrecondition or StatusCode.InvalidArgument ? ExitCodes.BadInput : ExitCodes.NoAnswer;
+    }
+}

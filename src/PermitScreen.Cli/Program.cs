@@ -1,0 +1,58 @@
+using System.CommandLine;
+using System.Text;
+using Grpc.Core;
+using PermitScreen.Cli;
+using PermitScreen.Cli.Commands;
+using PermitScreen.Cli.Printing;
+using PermitScreen.Service.Files;
+
+Console.OutputEncoding = Encoding.UTF8;
+var root = new RootCommand("PermitScreen: screens overweight vehicles against the bridges of a route. Exit codes: 0 passed or done, 1 not passed, 2 bad input, 3 no answer.")
+{
+    DemoCommand.Create(),
+    ScreenCommand.Create(),
+    CheckCommand.Create(),
+    ListCommand.Create(),
+    ShowCommand.Create(),
+    ServeCommand.Create(),
+};
+var parsed = root.Parse(args);
+if (parsed.Errors.Count > 0)
+{
+    foreach (var error in parsed.Errors)
+    {
+        await Console.Error.WriteLineAsync(error.Message);
+    }
+
+    await Console.Error.WriteLineAsync("Add --help to see what is allowed.");
+    return ExitCodes.BadInput;
+}
+
+try
+{
+    return await parsed.InvokeAsync(new InvocationConfiguration { EnableDefaultExceptionHandler = false });
+}
+catch (BadInputException error)
+{
+    await Console.Error.WriteLineAsync(error.Message);
+    return ExitCodes.BadInput;
+}
+catch (FileFaultsException error)
+{
+    await Console.Error.WriteLineAsync(error.Message);
+    return ExitCodes.BadInput;
+}
+catch (Exception error) when (error is IOException or UnauthorizedAccessException)
+{
+    await Console.Error.WriteLineAsync(error.Message);
+    return ExitCodes.BadInput;
+}
+catch (RpcException error)
+{
+    return await ErrorPrinter.PrintAsync(error);
+}
+catch (OperationCanceledException)
+{
+    await Console.Error.WriteLineAsync("Cancelled; no verdict was given.");
+    return ExitCodes.NoAnswer;
+}
