@@ -29,8 +29,8 @@ internal static class ApplicationMapper
             faults.Add("travel_to", "The last day of travel lies before the first one.");
         }
 
-        var states = application.Configurations.Select((c, i) => State(c, i, faults.At("configurations", i))).ToImmutableArray();
-        if (states.IsEmpty)
+        var states = !faults.Within("configurations", application.Configurations.Count, Limits.Configurations) ? [] : application.Configurations.Select((c, i) => State(c, i, faults.At("configurations", i))).ToImmutableArray();
+        if (application.Configurations.Count == 0)
         {
             faults.Add("configurations", "Missing; give at least one state in which the load travels.");
         }
@@ -120,7 +120,12 @@ internal static class ApplicationMapper
         {
             case C.Route.FormOneofCase.CrossingList:
                 var list = faults.Under("crossing_list");
-                if (route!.CrossingList.Crossings.Count == 0)
+                if (!list.Within("crossings", route!.CrossingList.Crossings.Count, Limits.Crossings))
+                {
+                    return [];
+                }
+
+                if (route.CrossingList.Crossings.Count == 0)
                 {
                     list.Add("crossings", "Missing; name at least one structure.");
                 }

@@ -21,6 +21,7 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
     /// <summary>All effects; meaningless where faults were added.</summary>
     /// <param name="unitFaults">Faults of the unit.</param>
     public ImmutableArray<EffectRecord> Map(FaultList unitFaults) =>
+        !unitFaults.Within("effects", unit.Effects.Count, Limits.Effects) ? [] :
         [.. unit.Effects.Select((e, i) => Effect(e, FormattableString.Invariant($"{path}.effects[{i}]"), unitFaults.At("effects", i)))];
 
     private EffectRecord Effect(C.Effect effect, string effectPath, FaultList faults)

@@ -26,6 +26,11 @@ internal static class StructureMapper
         faults.Text("title", structure.Title, "what people call it");
         Place(structure.Place, faults);
         var inspection = Inspection(structure.Inspection, faults);
+        if (!faults.Within("units", structure.Units.Count, Limits.Units))
+        {
+            return null;
+        }
+
         var units = ImmutableArray.CreateBuilder<UnitRecord>();
         var unitIds = new HashSet<string>(StringComparer.Ordinal);
         for (var u = 0; u < structure.Units.Count; u++)

@@ -35,6 +35,11 @@ internal static class TrussMapper
         }
 
         var before = faults.Count;
+        if (!faults.Within("nodes", truss.Nodes.Count, Limits.Nodes) || !faults.Within("members", truss.Members.Count, Limits.Members))
+        {
+            return null;
+        }
+
         var nodes = truss.Nodes.Select((n, i) => Node(n, faults.At("nodes", i))).ToList();
         var members = truss.Members.Select((m, i) => Member(m, i, path, faults.At("members", i), gaps)).ToList();
         var supports = truss.Supports.Select(s => new TrussSupport(s.Name, s.Node, s.HoldsHorizontal, s.HoldsVertical)).ToList();

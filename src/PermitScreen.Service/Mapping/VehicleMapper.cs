@@ -22,6 +22,11 @@ internal static class VehicleMapper
     {
         var before = faults.Count;
         var gapsBefore = gaps.Count;
+        if (!faults.Within("axles", train.Axles.Count, Limits.Axles))
+        {
+            return null;
+        }
+
         if (train.Axles.Count == 0)
         {
             faults.Add("axles", "Missing; give at least one axle, from the lead axle backwards.");
