@@ -55,9 +55,9 @@ internal sealed class ServiceConnection : IAsyncDisposable
                 throw new BadInputException("--server names a running service, which has its own catalogue and policies; leave out --catalogue and --policies.");
             }
 
-            return server.IsAbsoluteUri && server.Scheme is "http" or "https"
-                ? new ServiceConnection(null, server, TimeSpan.FromSeconds(timeout))
-                : throw new BadInputException($"--server is an address such as http://127.0.0.1:5080; found {server}.");
+            return Uri.TryCreate(server, UriKind.Absolute, out var address) && address.Scheme is "http" or "https"
+                ? new ServiceConnection(null, address, TimeSpan.FromSeconds(timeout))
+                : throw new BadInputException($"--server is an address such as http://127.0.0.1:5080; found \"{server}\".");
         }
 
         return await StartAsync(SourceOf(catalogue, policies), 0, TimeSpan.FromSeconds(timeout), cancellation);

@@ -7,7 +7,7 @@ internal sealed class ServiceOptions
 {
     private const double DefaultTimeoutSeconds = 60;
 
-    public Option<Uri?> Server { get; } = new("--server")
+    public Option<string?> Server { get; } = new("--server")
     {
         Description = "Address of a running service, for instance http://127.0.0.1:5080. Without it, a service of this command's own reads --catalogue and --policies.",
     };
