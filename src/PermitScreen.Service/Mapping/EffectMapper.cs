@@ -157,6 +157,12 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
             return null;
         }
 
+        if (resistance.Level.ToDomain() is not { } level)
+        {
+            gaps.Add(new Reason(ReasonCode.DataMissing, "A resistance does not say its level; RATING_LEVEL_NONE where its method knows none.", $"{field}.level"));
+            return null;
+        }
+
         var phi = faults.Optional("resistance_factor", resistance.HasResistanceFactor, resistance.ResistanceFactor, Allowed.Fraction, "dimensionless");
         double? amount = null;
         var nominal = false;
@@ -189,7 +195,7 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
             sense,
             method,
             state,
-            resistance.Level.ToDomain() ?? RatingLevel.None,
+            level,
             amount ?? 0,
             nominal,
             phi,

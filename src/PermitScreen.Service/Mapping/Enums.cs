@@ -26,7 +26,7 @@ internal static class Enums
 
     public static RatingLevel? ToDomain(this C.RatingLevel level) => level switch
     {
-        C.RatingLevel.Unspecified or C.RatingLevel.None => RatingLevel.None,
+        C.RatingLevel.None => RatingLevel.None,
         C.RatingLevel.Inventory => RatingLevel.Inventory,
         C.RatingLevel.Operating => RatingLevel.Operating,
         C.RatingLevel.Legal => RatingLevel.Legal,

@@ -99,7 +99,11 @@ internal static class PolicyMapper
             faults.Add("limit_state", "Missing; say LIMIT_STATE_STRENGTH or LIMIT_STATE_SERVICE.");
         }
 
-        if (policy.Method is C.RatingMethod.Lfr or C.RatingMethod.AllowableStress && policy.Level is not (C.RatingLevel.Inventory or C.RatingLevel.Operating))
+        if (policy.Level.ToDomain() is null)
+        {
+            faults.Add("level", "Missing; say the level, RATING_LEVEL_NONE where the method knows none: it decides which resistances fit.");
+        }
+        else if (policy.Method is C.RatingMethod.Lfr or C.RatingMethod.AllowableStress && policy.Level is not (C.RatingLevel.Inventory or C.RatingLevel.Operating))
         {
             faults.Add("level", "This method rates at a level; say RATING_LEVEL_INVENTORY or RATING_LEVEL_OPERATING.");
         }
@@ -168,12 +172,26 @@ internal static class PolicyMapper
             factors.Add(new DeadLoadFactor(component, adverse, relieving, factor.Required));
         }
 
-        if (!factors.Any(f => f.Required))
-        {
-            faults.Add("dead_load_factors", "No component is required; at least one must be, or missing dead load would pass unseen.");
-        }
-
+        RequireOwnWeight(policy, faults);
         return factors.ToImmutable();
+    }
+
+    /// <summary>Every structure has its own weight and a surface: effects that do not state them must not be rated as if they had none.</summary>
+    private static void RequireOwnWeight(C.Policy policy, FaultList faults)
+    {
+        foreach (var component in new[] { C.DeadLoadComponent.Dc, C.DeadLoadComponent.Dw })
+        {
+            var words = component.ToString().ToUpperInvariant();
+            var index = policy.DeadLoadFactors.ToList().FindIndex(f => f.Component == component);
+            if (index < 0)
+            {
+                faults.Add("dead_load_factors", $"Missing; give the factors of {words}, with required true.");
+            }
+            else if (!policy.DeadLoadFactors[index].Required)
+            {
+                faults.At("dead_load_factors", index).Add("required", $"Every rated effect states its {words}, or that there is none with the reason; say true.");
+            }
+        }
     }
 
     private static OtherLaneLoad? OtherLane(C.Policy policy, FaultList faults)
@@ -220,10 +238,14 @@ internal static class PolicyMapper
         }
 
         var at = faults.Under("same_lane_load");
-        return new SameLaneLoad(
-            at.Required("load_kn_per_m", load.HasLoadKnPerM, load.LoadKnPerM, Allowed.NotNegative, "kN/m"),
-            at.Required("for_spans_over_m", load.HasForSpansOverM, load.ForSpansOverM, Allowed.NotNegative, "m"),
-            load.ForHoggingAndInteriorReactions);
+        var intensity = at.Required("load_kn_per_m", load.HasLoadKnPerM, load.LoadKnPerM, Allowed.NotNegative, "kN/m");
+        var spansOver = at.Required("for_spans_over_m", load.HasForSpansOverM, load.ForSpansOverM, Allowed.NotNegative, "m");
+        if (intensity > 0 && spansOver > 0 && !load.ForHoggingAndInteriorReactions)
+        {
+            at.Add("for_hogging_and_interior_reactions", "Hogging moments and interior reactions take the load of two spans, whatever their length (MBE 6A.4.5.4.1); say true, or 0 kN/m where there is no such load.");
+        }
+
+        return new SameLaneLoad(intensity, spansOver, load.ForHoggingAndInteriorReactions);
     }
 
     private static LateralRules Lateral(C.LateralRules? rules, FaultList faults)

@@ -81,6 +81,11 @@ internal sealed class RungMapper(C.Policy policy)
                     faults.Add("other_lanes_loaded", "Ordinary traffic mixes with the vehicle, so a vehicle stands in each other lane; say true.");
                 }
 
+                if (!rung.SameLaneLoaded)
+                {
+                    faults.Add("same_lane_loaded", "Ordinary traffic mixes with the vehicle, so others follow it in its lane; say true, and 0 kN/m in same_lane_load where the source asks for no load.");
+                }
+
                 return OtherTraffic.Mixed;
             case C.OtherTraffic.None:
                 if (rung.OtherLanesLoaded || rung.SameLaneLoaded)

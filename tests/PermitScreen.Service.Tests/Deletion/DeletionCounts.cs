@@ -1,0 +1,22 @@
+using System.Globalization;
+using PermitScreen.Service.Tests.Support;
+
+namespace PermitScreen.Service.Tests.Deletion;
+
+/// <summary>How all deletions of a run came out.</summary>
+public sealed class DeletionCounts : IDisposable
+{
+    public int Deletions { get; set; }
+
+    public int Refused { get; set; }
+
+    public int NotAssessed { get; set; }
+
+    public int Allowed { get; set; }
+
+    public int Better { get; set; }
+
+    public void Dispose() => Figures.Write("deletion", string.Create(
+        CultureInfo.InvariantCulture,
+        $"{Deletions} deletions, {Refused} refused, {NotAssessed} not assessed, {Better} better ({Allowed} of a switch without presence, listed with the reason)"));
+}
