@@ -2,6 +2,7 @@ using System.CommandLine;
 using System.Net;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.Hosting;
+using PermitScreen.Cli.Connection;
 using PermitScreen.Host;
 using PermitScreen.Service.Workers;
 
@@ -26,7 +27,7 @@ internal static class ServeCommand
             {
                 Source = new CatalogueSource(parsed.GetValue(catalogue)!, parsed.GetValue(policies)!),
                 Address = IPAddress.TryParse(parsed.GetValue(address), out var ip) ? ip : throw new BadInputException($"--address is an IP address; found \"{parsed.GetValue(address)}\"."),
-                Port = parsed.GetValue(port) is var p and >= 0 and <= 65535 ? p : throw new BadInputException("--port is a number from 0 to 65535."),
+                Port = Ports.Checked(parsed.GetValue(port)),
                 Zone = TimeZoneInfo.TryFindSystemTimeZoneById(parsed.GetValue(zone)!, out var found) ? found : throw new BadInputException($"There is no time zone \"{parsed.GetValue(zone)}\"; give a name such as Europe/Lisbon."),
             };
             await using var app = ServiceHost.Build(settings);
@@ -37,6 +38,11 @@ internal static class ServeCommand
             catch (IOException error) when (error.InnerException is Microsoft.AspNetCore.Connections.AddressInUseException)
             {
                 throw new BadInputException(FormattableString.Invariant($"Port {settings.Port} is in use; give another one with --port."));
+            }
+            catch (OperationCanceledException) when (app.Services.GetRequiredService<StartFailure>().Reason is not null)
+            {
+                // The worker found the catalogue at fault, and stopped the host, before it had started.
+                return ExitCodes.BadInput;
             }
 
             Console.Out.WriteLine($"Listening at {ServiceHost.AddressOf(app)} (gRPC, HTTP/2 without TLS). Stop with Ctrl-C.");

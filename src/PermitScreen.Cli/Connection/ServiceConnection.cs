@@ -73,10 +73,12 @@ internal sealed class ServiceConnection : IAsyncDisposable
             await app.Services.GetRequiredService<ICatalogue>().CurrentAsync(cancellation);
             return new ServiceConnection(app, ServiceHost.AddressOf(app), timeout);
         }
-        catch (CatalogueUnavailableException error)
+        catch (Exception error) when (error is CatalogueUnavailableException or OperationCanceledException && app.Services.GetRequiredService<StartFailure>().Reason is not null)
         {
+            // The worker may stop the host while it is still starting; then the start is cancelled, and the reason is the worker's.
+            var reason = app.Services.GetRequiredService<StartFailure>().Reason!;
             await app.DisposeAsync();
-            throw error.InnerException ?? error;
+            throw reason;
         }
         catch (IOException error) when (error.InnerException is Microsoft.AspNetCore.Connections.AddressInUseException or SocketException)
         {

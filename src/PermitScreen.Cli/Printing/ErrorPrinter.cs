@@ -24,6 +24,8 @@ internal static class ErrorPrinter
         await Console.Error.WriteLineAsync(error.StatusCode switch
         {
             StatusCode.Unavailable when error.Status.DebugException is not null => $"The service cannot be reached: {error.Status.Detail}",
+            StatusCode.DeadlineExceeded => "No answer came in time, so no verdict was given; --timeout says how long to wait.",
+            _ when error.Status.Detail.Length == 0 => $"The call ended with {error.StatusCode}; no verdict was given.",
             _ => error.Status.Detail,
         });
         return error.StatusCode is StatusCode.NotFound or StatusCode.FailedPrecondition or StatusCode.InvalidArgument ? ExitCodes.BadInput : ExitCodes.NoAnswer;
