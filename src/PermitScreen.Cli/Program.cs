@@ -4,6 +4,7 @@ using Grpc.Core;
 using PermitScreen.Cli;
 using PermitScreen.Cli.Commands;
 using PermitScreen.Cli.Printing;
+using PermitScreen.Host;
 using PermitScreen.Service.Files;
 
 Console.OutputEncoding = Encoding.UTF8;
@@ -30,7 +31,13 @@ if (parsed.Errors.Count > 0)
 
 try
 {
-    return await parsed.InvokeAsync(new InvocationConfiguration { EnableDefaultExceptionHandler = false });
+    return await parsed.InvokeAsync(new InvocationConfiguration
+    {
+        EnableDefaultExceptionHandler = false,
+
+        // A signal ends the command; the service gets its time to stop before the process is torn down.
+        ProcessTerminationTimeout = ServiceHost.TimeToStop + TimeSpan.FromSeconds(3),
+    });
 }
 catch (BadInputException error)
 {

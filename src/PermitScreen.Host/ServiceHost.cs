@@ -4,6 +4,7 @@ using Microsoft.AspNetCore.Hosting.Server;
 using Microsoft.AspNetCore.Hosting.Server.Features;
 using Microsoft.AspNetCore.Server.Kestrel.Core;
 using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.Hosting;
 using Microsoft.Extensions.Logging;
 using PermitScreen.Service;
 using PermitScreen.Service.Workers;
@@ -13,6 +14,9 @@ namespace PermitScreen.Host;
 /// <summary>The composition root: builds one process of the service.</summary>
 public static class ServiceHost
 {
+    /// <summary>How long calls may go on once the service is told to stop; then they are cut off. Container runtimes kill after 10 s.</summary>
+    public static readonly TimeSpan TimeToStop = TimeSpan.FromSeconds(5);
+
     /// <summary>Builds the service; it listens once it is started.</summary>
     /// <param name="settings">Settings.</param>
     /// <exception cref="Service.Files.FileFaultsException">A policy is at fault.</exception>
@@ -31,6 +35,10 @@ public static class ServiceHost
         builder.Logging.SetMinimumLevel(settings.Quiet ? LogLevel.Warning : LogLevel.Information);
         builder.Logging.AddFilter("Microsoft.AspNetCore", LogLevel.Warning);
         builder.Logging.AddFilter("Grpc", LogLevel.Warning);
+
+        // Each question for readiness would log an error until the lines are ready; the worker logs its progress itself.
+        builder.Logging.AddFilter("Microsoft.Extensions.Diagnostics.HealthChecks", LogLevel.None);
+        builder.Services.Configure<HostOptions>(o => o.ShutdownTimeout = TimeToStop);
         builder.WebHost.ConfigureKestrel(o => o.Listen(settings.Address, settings.Port, l => l.Protocols = HttpProtocols.Http2));
         builder.Services.AddPermitScreen(settings.Source, policies, settings.Zone);
         var app = builder.Build();
