@@ -134,7 +134,7 @@ STRUCTURES = [
         steel=5.5, floor=7.5, thickness=0.17, wearing=0.05, system=WELDED,
         place=place("P14", 23.6, 4), clearanceOn=through_clearance(5.1, 8.0), inspection=inspection(2025, 9, 30, 7),
         bearings="the inspection of 2025 shows pot bearings without leaks", rated_bearings=("pier",), bearing_reserve=1.1,
-        built=1964, yield_mpa=248, factored=True, panels_per_splice=1, reserve={"all": 1.2}),
+        built=1964, yield_mpa=248, factored=True, panels_per_splice=1, reserve={"all": 1.24}),
     structure(
         "P14-0310", "Quillmoor Viaduct",
         [deck_pratt_seated(8, 5.0, 6.0, title="Deck Pratt truss, 40 m, end stringers seated on the abutments")],
@@ -166,7 +166,7 @@ STRUCTURES = [
         steel=7.0, floor=8.0, thickness=0.18, wearing=0.06,
         place=place("P31", 7.4, 1), clearanceOn=through_clearance(5.2, 8.6), inspection=inspection(2026, 6, 24, 6),
         bearings="the inspection of 2026 shows rockers free to move", hold_down={"start": 900.0, "end": 900.0},
-        connections=("diagonal",), built=1953, yield_mpa=228, panels_per_splice=1, reserve={"all": 1.5}),
+        connections=("diagonal",), built=1953, yield_mpa=228, panels_per_splice=1, reserve={"all": 1.5, "diagonal": 1.6}),
     structure(
         "P31-0118", "Fallow Cut Bridge",
         [underslung_pratt(6, 5.0, 4.8, 1.2, title="Underslung deck Pratt truss, 30 m, overhanging stringers")],

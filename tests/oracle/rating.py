@@ -98,7 +98,8 @@ class UnitModel:
         if any(m.get("tensionOnly") or m.get("eyebars") for m in message["members"]):
             raise NotImplementedError("the oracle knows no tension-only members")
         self.truss = Truss(message)
-        self.lines = self.truss.influence_lines(unit.get("startChainageM", 0.0))
+        self.start = unit.get("startChainageM", 0.0)
+        self.lines = self.truss.influence_lines(self.start)
         self.planes = {p["planeId"]: p for p in message["planes"]}
         if len(self.planes) != 2:
             raise NotImplementedError("the oracle knows two planes")
@@ -193,12 +194,16 @@ class UnitModel:
             self._extremes[place] = extremes(self.lines[key], train, directions)
         return self._extremes[place]
 
-    def same_lane_applies(self, key, rule):
-        """Whether the uniform load in the permit's lane acts on this effect."""
+    def same_lane_applies(self, key, rule, sign):
+        """Whether the uniform load in the permit's lane acts on the part of this sign of this effect's line."""
         if self.truss.longest_span() > rule["forSpansOverM"]:
             return True
-        return (rule.get("forHoggingAndInteriorReactions", False) and isinstance(key, tuple) and key[1] == "v"
-                and self.truss.is_interior(key[0]))
+        if not rule.get("forHoggingAndInteriorReactions", False):
+            return False
+        if isinstance(key, tuple) and key[1] == "v" and self.truss.is_interior(key[0]):
+            return True
+        bearings = [self.start + x for x in self.truss.bearing_places()]
+        return self.lines[key].loads_neighbours(sign, bearings)
 
 
 class Term:
@@ -250,7 +255,7 @@ def rate_sense(model, rated, setting):
     high, low = model.extremes(rated.key, train, directions)
     both = (FORWARD, REVERSE)
     other_high, other_low = model.extremes(rated.key, policy.other_train, both)
-    uniform_here = rung.get("sameLaneLoaded") and model.same_lane_applies(rated.key, policy.same_lane)
+    uniform_here = {up: rung.get("sameLaneLoaded") and model.same_lane_applies(rated.key, policy.same_lane, up) for up in (1, -1)}
     positive, negative = line.areas()
     impact, other_impact = 1 + rung["allowance"]["constant"], 1 + policy.other["allowance"]["constant"]
 
@@ -261,7 +266,7 @@ def rate_sense(model, rated, setting):
     terms = []
     for centre, others in setting["arrangements"]:
         share = model.share(rated.plane_id, centre)
-        uniform = policy.same_lane["loadKnPerM"] * in_sense(share, positive, negative) if uniform_here else 0.0
+        uniform = policy.same_lane["loadKnPerM"] * in_sense(share, positive, negative) if uniform_here[1 if share * rated.sign > 0 else -1] else 0.0
         beside = sum(policy.other["liveLoadFactor"] * other_impact
                      * in_sense(model.share(rated.plane_id, y), other_high, other_low) for y in others)
         terms.append(Term(policy.presence[1 + len(others)], impact * in_sense(share, high, low), uniform, beside))

@@ -139,6 +139,10 @@ class Truss:
         places = self._bearing_places()
         return max(b - a for a, b in zip(places, places[1:]))
 
+    def bearing_places(self):
+        """Places of the vertically held joints, ascending, m from the unit's datum."""
+        return self._bearing_places()
+
     def is_interior(self, support_name):
         """Whether the support is neither the first nor the last that holds its joint vertically."""
         places = self._bearing_places()
@@ -212,6 +216,25 @@ class Line:
     def smallest(self):
         """Smallest ordinate, at most 0."""
         return min(0.0, *self.before, *self.after)
+
+    def loads_neighbours(self, sign, bearings):
+        """Whether the part of this sign lies in two spans beside each other, as that of a hogging moment does."""
+        loaded = []
+        for start, end in zip(bearings, bearings[1:]):
+            loaded.append(any(
+                sign * (self.after[i] + self.before[i + 1]) > 2e-9 and min(self.xs[i + 1], end) - max(self.xs[i], start) > SAME_PLACE_M
+                or self._crossing_inside(i, sign, start, end)
+                for i in range(len(self.xs) - 1)))
+        return any(a and b for a, b in zip(loaded, loaded[1:]))
+
+    def _crossing_inside(self, i, sign, start, end):
+        """Whether a stretch that changes its sign has a part of this sign in a span."""
+        a, b = sign * self.after[i], sign * self.before[i + 1]
+        if not (a > 1e-9 and b < -1e-9 or a < -1e-9 and b > 1e-9):
+            return False
+        zero = self.xs[i] + (self.xs[i + 1] - self.xs[i]) * a / (a - b)
+        left, right = (self.xs[i], zero) if a > 0 else (zero, self.xs[i + 1])
+        return min(right, end) - max(left, start) > SAME_PLACE_M
 
     def areas(self):
         """Areas where the line is positive and where it is negative: (>= 0, <= 0), m."""

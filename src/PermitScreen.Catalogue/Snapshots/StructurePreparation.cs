@@ -67,6 +67,7 @@ public static class StructurePreparation
     private sealed class UnitPreparation(UnitRecord unit, TrussModel truss, TrussLines lines)
     {
         private readonly List<Reason> _gaps = [.. unit.Gaps];
+        private readonly ImmutableArray<UnratedBearing>.Builder _unratedBearings = ImmutableArray.CreateBuilder<UnratedBearing>();
         private readonly Dictionary<TrussQuantity, InfluenceLine> _shifted = [];
         private readonly HashSet<(TrussQuantity Quantity, string PlaneId)> _covered = [];
 
@@ -89,6 +90,10 @@ public static class StructurePreparation
                     if (effect.NotRatedReason is { } reason)
                     {
                         notRated.Add(new UnratedEffect(unit.UnitId, effect.EffectId, plane, effect.Description, reason));
+                        if (quantity.Kind == EffectKind.VerticalReaction)
+                        {
+                            _unratedBearings.Add(new UnratedBearing(plane, line, effect.Description, effect.Path));
+                        }
                     }
                     else if (effect.Gaps.IsEmpty)
                     {
@@ -103,9 +108,18 @@ public static class StructurePreparation
             }
 
             RequireEverything();
-            var (start, end, longest) = Extent();
+            RequireRatedEffects();
             var planes = unit.Planes.Length == 2 ? unit.Planes : [new Plane("", 0), new Plane("", 1)];
-            return new RatedUnit(unit.UnitId, planes[0], planes[1], start, end, longest, rated.ToImmutable(), [.. _gaps]);
+            return new RatedUnit(
+                unit.UnitId,
+                planes[0],
+                planes[1],
+                unit.StartChainageM + truss.DeckStartM,
+                unit.StartChainageM + truss.DeckEndM,
+                [.. HeldX().Select(x => unit.StartChainageM + x)],
+                rated.ToImmutable(),
+                _unratedBearings.ToImmutable(),
+                [.. _gaps]);
         }
 
         private RatedEffect Rated(EffectRecord effect, TrussQuantity quantity, string plane, InfluenceLine line) => new()
@@ -166,6 +180,18 @@ public static class StructurePreparation
             }
         }
 
+        /// <summary>A plane of which no effect is rated has not been checked, whatever the reasons stated one by one.</summary>
+        private void RequireRatedEffects()
+        {
+            foreach (var plane in unit.Planes)
+            {
+                if (!unit.Effects.Any(e => e.NotRatedReason is null && e.PlaneIds.Contains(plane.PlaneId)))
+                {
+                    _gaps.Add(new Reason(ReasonCode.DataMissing, $"No effect of plane {plane.PlaneId} is rated.", $"{unit.Path}.effects"));
+                }
+            }
+        }
+
         private void Require(TrussQuantity quantity, string planeId, string what)
         {
             if (!_covered.Contains((quantity, planeId)))
@@ -181,14 +207,7 @@ public static class StructurePreparation
             return own > x[0] && own < x[^1];
         }
 
-        private (double StartM, double EndM, double LongestSpanM) Extent()
-        {
-            var x = HeldX();
-            var longest = x.Zip(x.Skip(1), (a, b) => b - a).DefaultIfEmpty(0).Max();
-            return (unit.StartChainageM + truss.DeckStartM, unit.StartChainageM + truss.DeckEndM, longest);
-        }
-
-        private List<double> HeldX() => [.. truss.Supports.Where(s => s.HoldsY).Select(s => NodeX(s.Node)).Order()];
+        private List<double> HeldX() => [.. truss.Supports.Where(s => s.HoldsY).Select(s => NodeX(s.Node)).Distinct().Order()];
 
         private double NodeX(string name) => truss.Nodes.First(n => n.Name == name).XM;
     }

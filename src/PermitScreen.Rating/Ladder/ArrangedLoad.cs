@@ -29,10 +29,11 @@ public sealed class ArrangedLoad
     {
         (_load, _effect, _arrangement) = (load, effect, arrangement);
         _permit = VehicleOnPlane.Of(extremes, load.Unit, effect, sense, load.Permit, arrangement.PermitCentreM, load.Directions, load.Policy.Weighing);
-        _permitAllowance = load.Rung.Allowance.For(AdverseParts.LengthM(effect.Line, _permit.LineSense));
-        _laneKnPerM = load.SameLaneKnPerM(effect);
+        _permitAllowance = load.Rung.Allowance.For(AdverseParts.LobeLengthM(effect.Line, _permit.LineSense, load.Permit.Train, _permit.Position));
         var laneShare = Shares.Of(load.Unit, effect.PlaneId, arrangement.PermitCentreM);
-        _laneArea = Math.Abs(laneShare) * AdverseParts.Area(effect.Line, laneShare >= 0 ? sense.Extreme() : sense.Extreme().Opposite());
+        var laneSense = laneShare >= 0 ? sense.Extreme() : sense.Extreme().Opposite();
+        _laneKnPerM = load.SameLaneKnPerM(effect, laneSense);
+        _laneArea = Math.Abs(laneShare) * AdverseParts.Area(effect.Line, laneSense);
 
         var others = ImmutableArray.CreateBuilder<(VehicleEffect, double, double)>(arrangement.OtherCentresM.Length);
         var othersSum = 0.0;
@@ -41,7 +42,7 @@ public sealed class ArrangedLoad
             // The vehicles move independently of each other: each has its own worst place and direction (rule A4).
             var lane = load.Policy.OtherLane!;
             var vehicle = VehicleOnPlane.Of(extremes, load.Unit, effect, sense, lane.Vehicle, centre, TravelDirections.Both, WeighingRule.None);
-            var allowance = lane.Allowance.For(AdverseParts.LengthM(effect.Line, vehicle.LineSense));
+            var allowance = lane.Allowance.For(AdverseParts.LobeLengthM(effect.Line, vehicle.LineSense, lane.Vehicle.Train, vehicle.Position));
             others.Add((vehicle, allowance, centre));
             othersSum += lane.LiveLoadFactor * vehicle.SharedKn * (1 + allowance);
         }

@@ -12,11 +12,11 @@ public static class Capacities
     /// <param name="policy">Policy.</param>
     public static bool Fits(Resistance resistance, Policy policy)
     {
-        // Load and resistance factor rating and the Eurocodes know no levels of resistance; the other methods do.
+        // Load and resistance factor rating and the Eurocodes know no levels of resistance, so none of theirs may fall out; the other methods do.
         var levelled = policy.Method is RatingMethod.Lfr or RatingMethod.AllowableStress;
         return resistance.Method == policy.Method
             && resistance.LimitState == policy.LimitState
-            && (resistance.Level == policy.Level || (!levelled && resistance.Level == RatingLevel.None));
+            && (resistance.Level == policy.Level || !levelled);
     }
 
     /// <summary>The capacity of one resistance, or null with the reasons why it cannot be told.</summary>

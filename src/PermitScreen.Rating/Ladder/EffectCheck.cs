@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using PermitScreen.Rating.Checks;
+using PermitScreen.Rating.Policies;
 using PermitScreen.Rating.Structures;
 
 namespace PermitScreen.Rating.Ladder;
@@ -34,7 +35,7 @@ public static class EffectCheck
             return null;
         }
 
-        if (LeastCapacity(effect, sense, load, reasons) is not var (capacity, element))
+        if (LeastCapacity(effect, sense, load.Policy, reasons) is not var (capacity, element))
         {
             return null;
         }
@@ -68,8 +69,26 @@ public static class EffectCheck
         };
     }
 
+    /// <summary>What keeps an effect from being rated under a policy, whatever the vehicle.</summary>
+    /// <param name="effect">Effect.</param>
+    /// <param name="policy">Policy.</param>
+    public static IReadOnlyList<Reason> Gaps(RatedEffect effect, Policy policy)
+    {
+        var reasons = new List<Reason>();
+        foreach (var sense in new[] { effect.Kind.PositiveSense(), effect.Kind.NegativeSense() })
+        {
+            var lineActs = sense.Sign() > 0 ? effect.Line.HasPositive : effect.Line.HasNegative;
+            if (DeadLoads.Of(effect, sense, policy, reasons) is { } deadLoads && (lineActs || DeadLoads.Sum(deadLoads) > 0))
+            {
+                LeastCapacity(effect, sense, policy, reasons);
+            }
+        }
+
+        return [.. reasons.Distinct()];
+    }
+
     /// <summary>Several resistances per sense are allowed; the least governs and its element is named (rule D1).</summary>
-    private static (CapacityArithmetic Capacity, string Element)? LeastCapacity(RatedEffect effect, EffectSense sense, RungLoad load, List<Reason> reasons)
+    private static (CapacityArithmetic Capacity, string Element)? LeastCapacity(RatedEffect effect, EffectSense sense, Policy policy, List<Reason> reasons)
     {
         if (effect.NoHoldDown && sense == EffectSense.Uplift)
         {
@@ -79,9 +98,9 @@ public static class EffectCheck
         var before = reasons.Count;
         (CapacityArithmetic Capacity, string Element)? least = null;
         var ofSense = effect.Resistances.Where(r => r.Sense == sense).ToImmutableArray();
-        foreach (var resistance in ofSense.Where(r => Capacities.Fits(r, load.Policy)))
+        foreach (var resistance in ofSense.Where(r => Capacities.Fits(r, policy)))
         {
-            if (Capacities.Of(effect, resistance, load.Policy, reasons) is { } capacity
+            if (Capacities.Of(effect, resistance, policy, reasons) is { } capacity
                 && (least is not { } known || capacity.CapacityKn < known.Capacity.CapacityKn))
             {
                 least = (capacity, resistance.Element);

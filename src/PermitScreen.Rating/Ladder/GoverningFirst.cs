@@ -18,6 +18,7 @@ public sealed class GoverningFirst : IComparer<EffectResult>
         ArgumentNullException.ThrowIfNull(x);
         ArgumentNullException.ThrowIfNull(y);
         var order = Rank(x).CompareTo(Rank(y));
+        order = order != 0 ? order : x.Passes.CompareTo(y.Passes);
         order = order != 0 ? order : (x.State == RatingFactorState.DeadLoadExceeds ? x.NumeratorKn : x.RatingFactor ?? 0)
             .CompareTo(y.State == RatingFactorState.DeadLoadExceeds ? y.NumeratorKn : y.RatingFactor ?? 0);
         order = order != 0 ? order : string.CompareOrdinal(x.Effect.UnitId, y.Effect.UnitId);

@@ -33,7 +33,7 @@ public static class LadderScreening
         var passing = rungs.FirstOrDefault(r => r.Outcome == RungOutcome.Passes);
         var verdict = passing is null
             ? rungs.Any(r => r.Outcome == RungOutcome.NotAssessed) ? Verdict.NotAssessed : Verdict.Fail
-            : ReferenceEquals(passing, rungs[0]) ? Verdict.Pass : Verdict.PassWithConditions;
+            : ReferenceEquals(passing, rungs[0]) && passing.Rung.Unrestricted ? Verdict.Pass : Verdict.PassWithConditions;
         return new LadderResult(verdict, rungs, passing ?? rungs.LastOrDefault(r => r.Outcome != RungOutcome.Unavailable));
     }
 
@@ -79,21 +79,41 @@ public static class LadderScreening
         private void Rate(string configurationId, PermitVehicle vehicle, LiveLoadRow row, CancellationToken cancellation)
         {
             var arrangements = Arrangements.Of(structure.Roadway, vehicle.WidthOverTyresM, rung, policy, out var blocked);
+            if (blocked is null && structure.Units.IsEmpty)
+            {
+                return;
+            }
+
             if (blocked is not null)
             {
                 (blocked.Code == ReasonCode.DataMissing ? _missing : _blocked).Add(blocked);
                 return;
             }
 
+            var lengthM = structure.Units.Max(u => u.DeckEndM) - structure.Units.Min(u => u.DeckStartM);
+            var factors = new LiveLoadFactors(row, structure.Roadway.AdttOneDirection, vehicle.Train, lengthM);
             foreach (var unit in structure.Units)
             {
-                var factors = new LiveLoadFactors(row, structure.Roadway.AdttOneDirection, vehicle.Train, unit.DeckEndM - unit.DeckStartM);
+                RequireNoUnratedUplift(unit, arrangements);
                 var load = new RungLoad(policy, rung, unit, configurationId, vehicle, directions, arrangements, factors);
                 foreach (var effect in unit.Effects)
                 {
                     cancellation.ThrowIfCancellationRequested();
                     Keep(EffectCheck.Of(load, effect, effect.Kind.PositiveSense(), extremes, _missing));
                     Keep(EffectCheck.Of(load, effect, effect.Kind.NegativeSense(), extremes, _missing));
+                }
+            }
+        }
+
+        /// <summary>A vehicle beyond one plane lifts the other one, though its line has no negative part.</summary>
+        private void RequireNoUnratedUplift(RatedUnit unit, ImmutableArray<Arrangement> arrangements)
+        {
+            foreach (var bearing in unit.UnratedBearings.Where(b => b.Line.HasPositive))
+            {
+                var lowest = arrangements.SelectMany(a => a.OtherCentresM.Append(a.PermitCentreM)).Min(y => Shares.Of(unit, bearing.PlaneId, y));
+                if (lowest < 0)
+                {
+                    _missing.Add(new Reason(ReasonCode.DataMissing, $"A vehicle can stand beyond the other plane and lift the {bearing.Description} ({bearing.PlaneId}); it must be rated in uplift.", bearing.Path));
                 }
             }
         }

@@ -52,7 +52,7 @@ public static class LargestAxleFactor
         var high = 1.0;
         foreach (var low in boundaries.Where(b => b < 1).OrderDescending().Append(0.0))
         {
-            var largest = Largest(loads, factors.At(high).Factor, numeratorKn);
+            var largest = Largest(loads, factors.At(Inside(low, high)).Factor, numeratorKn);
             if (largest > low)
             {
                 return Math.Min(largest, high);

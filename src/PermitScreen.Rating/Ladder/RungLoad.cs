@@ -28,13 +28,17 @@ public sealed record RungLoad(
 {
     /// <summary>Intensity of the uniform load in the permit's lane for an effect, kN/m; 0 where none applies (rule A5).</summary>
     /// <param name="effect">Effect.</param>
-    public double SameLaneKnPerM(RatedEffect effect)
+    /// <param name="sense">Which sign of its line is loaded.</param>
+    public double SameLaneKnPerM(RatedEffect effect, Sense sense)
     {
         if (!Rung.SameLaneLoaded || Policy.SameLane is not { } load)
         {
             return 0;
         }
 
-        return Unit.LongestSpanM > load.ForSpansOverM || (load.ForInteriorReactions && effect.InteriorReaction) ? load.LoadKnPerM : 0;
+        // A truss has no hogging moment as such: it is what loads a chord or web member over a pier from the spans on both sides.
+        var hogging = load.ForHoggingAndInteriorReactions && AdverseParts.InAdjacentSpans(effect.Line, sense, Unit.BearingsM);
+        var interior = load.ForHoggingAndInteriorReactions && effect.InteriorReaction;
+        return Unit.LongestSpanM > load.ForSpansOverM || hogging || interior ? load.LoadKnPerM : 0;
     }
 }

@@ -30,7 +30,7 @@ public static class VehicleOnPlane
         var share = Shares.Of(unit, effect.PlaneId, centreM);
         if (vehicle.HasLateralOffsets)
         {
-            return WithOffsets(unit, effect, sense, vehicle, share, directions, rule);
+            return WithOffsets(extremes, unit, effect, sense, vehicle, share, directions, rule);
         }
 
         var lineSense = share >= 0 ? sense.Extreme() : sense.Extreme().Opposite();
@@ -41,7 +41,7 @@ public static class VehicleOnPlane
 
     /// <summary>Axles off the vehicle's centreline: each axle's own share weighs its load, and the offsets change sides with the direction of travel.</summary>
     private static VehicleEffect WithOffsets(
-        RatedUnit unit, RatedEffect effect, EffectSense sense, PermitVehicle vehicle, double share, TravelDirections directions, WeighingRule rule)
+        LineExtremes extremes, RatedUnit unit, RatedEffect effect, EffectSense sense, PermitVehicle vehicle, double share, TravelDirections directions, WeighingRule rule)
     {
         var slope = Shares.SlopePerM(unit, effect.PlaneId);
         Extreme? worst = null;
@@ -58,7 +58,7 @@ public static class VehicleOnPlane
                 weights[i] = vehicle.Train.LoadsKn[i] * (share + side * slope * vehicle.LateralOffsetsM[i]);
             }
 
-            var found = SweepExtremes.Of(effect.Line, vehicle.Train.WithLoads(weights), sense.Extreme(), flag, rule);
+            var found = extremes.Of(effect.Line, vehicle.Train.WithLoads(weights), sense.Extreme(), flag, rule);
             if (worst is not { } known || Math.Abs(found.Value) > Math.Abs(known.Value))
             {
                 worst = found;
@@ -70,6 +70,7 @@ public static class VehicleOnPlane
         var whole = extreme.Position is { } position
             ? Math.Abs(Response.At(effect.Line, vehicle.Train, position, sense.Extreme(), rule))
             : 0;
-        return new VehicleEffect(shared, whole > 0 ? shared / whole : 0, whole, sense.Extreme(), extreme.Position);
+        var lineSense = share >= 0 ? sense.Extreme() : sense.Extreme().Opposite();
+        return new VehicleEffect(shared, whole > 0 ? shared / whole : 0, whole, lineSense, extreme.Position);
     }
 }

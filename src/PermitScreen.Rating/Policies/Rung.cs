@@ -20,6 +20,15 @@ public sealed record Rung
     /// <summary>How far the vehicle's centre may be off the centreline, m, where it drives there; else 0.</summary>
     public double CentrelineToleranceM { get; init; }
 
+    /// <summary>Highest speed, km/h; null means the ordinary speed.</summary>
+    public double? SpeedLimitKmPerH { get; init; }
+
+    /// <summary>How far "nobody else" reaches; null where others may be there.</summary>
+    public ExclusionExtent? Exclusion { get; init; }
+
+    /// <summary>Whether a vehicle may travel as any other does: a pass under it is a pass without conditions.</summary>
+    public bool Unrestricted => OtherTraffic == OtherTraffic.Mixed && LateralPlace == LateralPlace.Anywhere && SpeedLimitKmPerH is null;
+
     /// <summary>Ids of its live-load rows; the one of the permit's kind is used.</summary>
     public required ImmutableArray<string> LiveLoadRowIds { get; init; }
 

@@ -8,8 +8,9 @@ namespace PermitScreen.Rating.Structures;
 /// <param name="RightPlane">Plane at the greater lateral position.</param>
 /// <param name="DeckStartM">Where the deck begins, m on the structure's chainage.</param>
 /// <param name="DeckEndM">Where the deck ends, m on the structure's chainage.</param>
-/// <param name="LongestSpanM">Longest distance between successive vertically held joints, m.</param>
+/// <param name="BearingsM">Chainages of the vertically held joints, ascending, m.</param>
 /// <param name="Effects">Rated effects of both planes.</param>
+/// <param name="UnratedBearings">Vertical reactions that are not rated.</param>
 /// <param name="Gaps">What keeps this unit, or effects of it, from being assessed on any rung.</param>
 public sealed record RatedUnit(
     string UnitId,
@@ -17,6 +18,11 @@ public sealed record RatedUnit(
     Plane RightPlane,
     double DeckStartM,
     double DeckEndM,
-    double LongestSpanM,
+    ImmutableArray<double> BearingsM,
     ImmutableArray<RatedEffect> Effects,
-    ImmutableArray<Checks.Reason> Gaps);
+    ImmutableArray<UnratedBearing> UnratedBearings,
+    ImmutableArray<Checks.Reason> Gaps)
+{
+    /// <summary>Longest distance between successive vertically held joints, m.</summary>
+    public double LongestSpanM => BearingsM.Zip(BearingsM.Skip(1), (a, b) => b - a).DefaultIfEmpty(0).Max();
+}

@@ -78,7 +78,7 @@ public static class RouteScreening
         CancellationToken cancellation)
     {
         var record = structure.Record;
-        var firstDay = asOf < application.TravelFrom ? asOf : application.TravelFrom;
+        var firstDay = asOf > application.TravelFrom ? asOf : application.TravelFrom;
         StandingCheck.Of(record, policy.Standing, asOf, firstDay, application.TravelTo, findings);
         FitCheck.Of(record.ClearanceOn, "clearance_on", states, policy.Standing, findings);
         if (record.HasOverride)

@@ -12,7 +12,7 @@ public static class StandingCheck
     /// <param name="record">Structure.</param>
     /// <param name="rules">The policy's rules.</param>
     /// <param name="asOf">Civil date for which the inspection is judged.</param>
-    /// <param name="firstDay">First day for restrictions, the as-of date or the first day of travel, whichever is sooner.</param>
+    /// <param name="firstDay">First day to look at, the as-of date or the first day of travel, whichever is later.</param>
     /// <param name="lastDay">Last day of travel.</param>
     /// <param name="findings">Takes what is found.</param>
     public static void Of(StructureRecord record, StandingRules rules, DateOnly asOf, DateOnly firstDay, DateOnly lastDay, Findings findings)
@@ -27,7 +27,7 @@ public static class StandingCheck
             }
         }
 
-        OfInspection(record.Inspection, rules, asOf, findings);
+        OfInspection(record.Inspection, rules, asOf, firstDay, findings);
     }
 
     private static void OfState(StructureState? state, StructureRecord record, string when, string field, Findings findings)
@@ -52,7 +52,7 @@ public static class StandingCheck
         }
     }
 
-    private static void OfInspection(Inspection? inspection, StandingRules rules, DateOnly asOf, Findings findings)
+    private static void OfInspection(Inspection? inspection, StandingRules rules, DateOnly asOf, DateOnly firstDay, Findings findings)
     {
         if (inspection?.SuperstructureCondition is not { } condition)
         {
@@ -67,13 +67,17 @@ public static class StandingCheck
         {
             findings.NotAssessed(ReasonCode.DataMissing, "The day of the last inspection is not in the catalogue.", "inspection.inspected_on");
         }
+        else if (day > asOf)
+        {
+            findings.NotAssessed(ReasonCode.DataMissing, $"The last inspection is dated {Iso(day)}, after the as-of date {Iso(asOf)}.", "inspection.inspected_on");
+        }
         else if (inspection.IntervalMonths is not { } months)
         {
             findings.NotAssessed(ReasonCode.DataMissing, "The inspection interval is not in the catalogue.", "inspection.interval_months");
         }
-        else if (day.AddMonths(months) < asOf)
+        else if (day.AddMonths(months) < firstDay)
         {
-            findings.Doubt(rules.OverdueInspection, ReasonCode.InspectionOverdue, $"The inspection is overdue: last on {Iso(day)}, due by {Iso(day.AddMonths(months))}.", "inspection.inspected_on");
+            findings.Doubt(rules.OverdueInspection, ReasonCode.InspectionOverdue, $"The inspection is overdue: last on {Iso(day)}, due by {Iso(day.AddMonths(months))}, looked at for {Iso(firstDay)}.", "inspection.inspected_on");
         }
     }
 

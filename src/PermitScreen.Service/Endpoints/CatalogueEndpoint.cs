@@ -12,8 +12,7 @@ namespace PermitScreen.Service.Endpoints;
 /// <param name="catalogue">Catalogue.</param>
 /// <param name="shelf">Structures as they were read.</param>
 /// <param name="policies">Policies, which say what must be stated.</param>
-/// <param name="lines">Lines known so far.</param>
-public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf, PolicyShelf policies, LineCache lines) : CatalogueService.CatalogueServiceBase
+public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf, PolicyShelf policies) : CatalogueService.CatalogueServiceBase
 {
     private const int DefaultStructures = 50;
     private const int DefaultLines = 200;
@@ -47,7 +46,7 @@ public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureShelf shelf
 
         var faults = new FaultList();
         var response = new ValidateStructureResponse();
-        var prepared = StructureMapper.Map(request.Structure, faults) is { } record ? StructurePreparation.Prepare(record, lines, faults) : null;
+        var prepared = StructureMapper.Map(request.Structure, faults) is { } record ? StructurePreparation.Prepare(record, new LineCache(), faults) : null;
         context.CancellationToken.ThrowIfCancellationRequested();
         response.Faults.AddRange(faults.All.Select(ReasonWriter.Write));
         if (prepared is not null)

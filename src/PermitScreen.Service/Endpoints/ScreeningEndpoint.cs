@@ -32,6 +32,11 @@ public sealed class ScreeningEndpoint(ICatalogue catalogue, PolicyShelf policies
         Names.Policy(faults, "policy", request.Policy);
         var asOf = faults.Date("as_of_date", request.AsOfDate) ?? today.Today();
         var next = faults.Optional("next_effects", request.HasNextEffects, request.NextEffects, 0, MostNextEffects) ?? DefaultNextEffects;
+        if (application?.TravelTo < asOf)
+        {
+            faults.Under("application").Add("travel_to", FormattableString.Invariant($"Found {application.TravelTo:yyyy-MM-dd}, before the as-of date {asOf:yyyy-MM-dd}; screen travel that is still to come, or state the as_of_date of the time."));
+        }
+
         if (faults.Any || application is null)
         {
             throw BadRequests.From("The request", faults.All);

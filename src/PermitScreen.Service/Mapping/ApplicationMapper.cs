@@ -85,6 +85,14 @@ internal static class ApplicationMapper
         Names.Id(faults, "configuration_id", configuration.ConfigurationId, "loaded");
         var width = faults.Optional("overall_width_m", configuration.HasOverallWidthM, configuration.OverallWidthM, Allowed.Positive, "m");
         var height = faults.Optional("overall_height_m", configuration.HasOverallHeightM, configuration.OverallHeightM, Allowed.Positive, "m");
+        foreach (var train in configuration.Loading?.AxleTrains ?? [])
+        {
+            if (width is { } overall && train.HasWidthOverTyresM && train.WidthOverTyresM > overall)
+            {
+                faults.Add("overall_width_m", $"Found {Fields.Text(overall)}; the overall width is not less than the width over tyres, {Fields.Text(train.WidthOverTyresM)} m.");
+            }
+        }
+
         PermitVehicle? vehicle = null;
         var loading = configuration.Loading;
         if (loading is null || loading.AxleTrains.Count == 0)

@@ -32,6 +32,12 @@ internal sealed class EffectMapper(C.Unit unit, string path, int? structureCondi
             faults.Add("effect_id", $"\"{effect.EffectId}\" names two effects; give each an id of its own.");
         }
 
+        if (!faults.Within("plane_ids", effect.PlaneIds.Count, Limits.Planes)
+            || (effect.Rated is { } listed && !(faults.Within("rated.resistances", listed.Resistances.Count, Limits.PerEffect) && faults.Within("rated.dead_loads", listed.DeadLoads.Count, Limits.PerEffect))))
+        {
+            return new EffectRecord { EffectId = effect.EffectId, PlaneIds = [], Description = "", Path = effectPath };
+        }
+
         var gaps = new List<Reason>();
         var (quantity, words) = Quantity(effect, effectPath, faults, gaps);
         Planes(effect, quantity, faults);

@@ -6,6 +6,22 @@ namespace PermitScreen.Service.Mapping;
 /// <summary>Reads fields of the contract, with a fault for each that is malformed: value found, what is allowed.</summary>
 internal static class Fields
 {
+    private const int EarliestYear = 1800;
+    private const int LatestYear = 2200;
+
+    /// <summary>A length or position that may be absent, within what a structure can have.</summary>
+    public static double? Within(this FaultList faults, string field, bool has, double value, double most)
+    {
+        var number = faults.Optional(field, has, value, Allowed.Any, "m");
+        if (number is { } found && Math.Abs(found) > most)
+        {
+            faults.Add(field, $"Found {Text(found)}; allowed is -{Text(most)} to {Text(most)}, m.");
+            return null;
+        }
+
+        return number;
+    }
+
     /// <summary>A number that may be absent; null also where it is malformed.</summary>
     public static double? Optional(this FaultList faults, string field, bool has, double value, Allowed allowed, string unit)
     {
@@ -33,6 +49,17 @@ internal static class Fields
         }
 
         return faults.Optional(field, has, value, allowed, unit) ?? double.NaN;
+    }
+
+    /// <summary>A length or position that must be there, within what a structure can have.</summary>
+    public static double Required(this FaultList faults, string field, bool has, double value, double most)
+    {
+        if (!has)
+        {
+            faults.Add(field, $"Missing; give a number from -{Text(most)} to {Text(most)}, m.");
+        }
+
+        return faults.Within(field, has, value, most) ?? double.NaN;
     }
 
     /// <summary>A whole number that may be absent.</summary>
@@ -83,12 +110,12 @@ internal static class Fields
             return null;
         }
 
-        if (date.Year is >= 1 and <= 9999 && date.Month is >= 1 and <= 12 && date.Day >= 1 && date.Day <= DateTime.DaysInMonth(date.Year, date.Month))
+        if (date.Year is >= EarliestYear and <= LatestYear && date.Month is >= 1 and <= 12 && date.Day >= 1 && date.Day <= DateTime.DaysInMonth(date.Year, date.Month))
         {
             return new DateOnly(date.Year, date.Month, date.Day);
         }
 
-        faults.Add(field, string.Create(CultureInfo.InvariantCulture, $"Found {date.Year}-{date.Month}-{date.Day}; allowed is a civil date with year, month and day."));
+        faults.Add(field, string.Create(CultureInfo.InvariantCulture, $"Found {date.Year}-{date.Month}-{date.Day}; allowed is a civil date with year ({EarliestYear} to {LatestYear}), month and day."));
         return null;
     }
 

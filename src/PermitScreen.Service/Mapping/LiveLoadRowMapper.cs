@@ -16,6 +16,7 @@ internal static class LiveLoadRowMapper
             faults.Add("live_load_rows", "Missing; give at least one row of live-load factors.");
         }
 
+        faults.Within("live_load_rows", policy.LiveLoadRows.Count, Limits.Rows);
         foreach (var twice in policy.LiveLoadRows.GroupBy(r => r.RowId).Where(g => g.Count() > 1))
         {
             faults.Add("live_load_rows", $"\"{twice.Key}\" names {twice.Count()} rows; give each an id of its own.");
@@ -72,6 +73,7 @@ internal static class LiveLoadRowMapper
 
     private static (ImmutableArray<double> Counts, ImmutableArray<LiveLoadClass> Classes) Table(C.LiveLoadRow row, FaultList faults)
     {
+        faults.Within("factors", row.Factors.Count, Limits.Factors);
         var cells = new Dictionary<(double Count, double UpTo), double>();
         for (var i = 0; i < row.Factors.Count; i++)
         {

@@ -16,6 +16,7 @@ internal sealed class RungMapper(C.Policy policy)
             faults.Add("rungs", "Missing; give at least one set of travel conditions.");
         }
 
+        faults.Within("rungs", policy.Rungs.Count, Limits.Rungs);
         foreach (var twice in policy.Rungs.GroupBy(r => r.RungId).Where(g => g.Count() > 1))
         {
             faults.Add("rungs", $"\"{twice.Key}\" names {twice.Count()} rungs; give each an id of its own.");
@@ -64,6 +65,8 @@ internal sealed class RungMapper(C.Policy policy)
             OtherTraffic = traffic,
             LateralPlace = place,
             CentrelineToleranceM = place == LateralPlace.Centreline ? tolerance ?? 0 : 0,
+            SpeedLimitKmPerH = rung.HasSpeedLimitKmPerH ? rung.SpeedLimitKmPerH : null,
+            Exclusion = traffic == OtherTraffic.Mixed ? null : rung.Exclusion == C.ExclusionExtent.Unit ? ExclusionExtent.Unit : ExclusionExtent.Structure,
             LiveLoadRowIds = [.. rung.LiveLoadRowIds],
             Allowance = allowance,
             OtherLanesLoaded = rung.OtherLanesLoaded,

@@ -44,6 +44,11 @@ internal sealed class ScreeningWriter(bool full, int nextEffects)
             screening.Notices.Add(Cautions.DraftPolicy);
         }
 
+        if (application.TravelFrom < policy.InForceFrom || application.TravelTo > policy.InForceTo)
+        {
+            screening.Notices.Add("The policy is not in force on all days of travel.");
+        }
+
         screening.Notices.Add(FormattableString.Invariant($"Weighing tolerance {policy.Policy.Weighing.Tolerance:0.###}."));
         screening.Crossings.AddRange(result.Crossings.Select(Crossing));
         return screening;
@@ -79,6 +84,12 @@ internal sealed class ScreeningWriter(bool full, int nextEffects)
 
         if (reported is not null)
         {
+            written.TravelConditions = passing is null ? null : Conditions(passing.Rung);
+        }
+
+        // Where some effects could not be rated, the least of the others is no answer for the crossing; the rungs still tell it.
+        if (reported is { Outcome: not RungOutcome.NotAssessed })
+        {
             Set(reported.RatingFactor, v => written.RatingFactor = v);
             Set(reported.LargestAxleFactor, v => written.LargestAxleFactor = v);
             if (reported.Governing is { } governing)
@@ -101,6 +112,7 @@ internal sealed class ScreeningWriter(bool full, int nextEffects)
         {
             RungId = result.Rung.RungId,
             Conditions = result.Rung.Conditions,
+            TravelConditions = Conditions(result.Rung),
             Outcome = result.Outcome switch
             {
                 RungOutcome.Passes => C.RungOutcome.Passes,
@@ -119,6 +131,28 @@ internal sealed class ScreeningWriter(bool full, int nextEffects)
         }
 
         return written;
+    }
+
+    private static C.TravelConditions Conditions(Rung rung)
+    {
+        var conditions = new C.TravelConditions
+        {
+            OtherTraffic = rung.OtherTraffic == OtherTraffic.Mixed ? C.OtherTraffic.Mixed : C.OtherTraffic.None,
+            Exclusion = rung.Exclusion switch
+            {
+                ExclusionExtent.Unit => C.ExclusionExtent.Unit,
+                ExclusionExtent.Structure => C.ExclusionExtent.Structure,
+                _ => C.ExclusionExtent.Unspecified,
+            },
+            LateralPlace = rung.LateralPlace == LateralPlace.Anywhere ? C.LateralPlace.Anywhere : C.LateralPlace.Centreline,
+        };
+        if (rung.LateralPlace == LateralPlace.Centreline)
+        {
+            conditions.CentrelineToleranceM = rung.CentrelineToleranceM;
+        }
+
+        Set(rung.SpeedLimitKmPerH, v => conditions.SpeedLimitKmPerH = v);
+        return conditions;
     }
 
     private static C.Verdict Verdict(Verdict verdict) => verdict switch

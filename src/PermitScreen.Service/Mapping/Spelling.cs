@@ -3,12 +3,20 @@ namespace PermitScreen.Service.Mapping;
 /// <summary>Finds the name that a user may have meant.</summary>
 internal static class Spelling
 {
+    private const int LongestName = 100;
+
     /// <summary>The known name nearest to a wrong one by edit distance, or null where none is near.</summary>
     /// <param name="known">Known names.</param>
     /// <param name="found">What was written.</param>
     public static string? Nearest(IEnumerable<string> known, string found)
     {
+        if (found.Length > LongestName)
+        {
+            return null;
+        }
+
         var best = known
+            .Where(name => name.Length <= LongestName)
             .Select(name => (Name: name, Distance: Distance(name, found)))
             .OrderBy(n => n.Distance)
             .ThenBy(n => n.Name, StringComparer.Ordinal)

@@ -1,7 +1,6 @@
 using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Rating.Checks;
 using PermitScreen.Rating.Ladder;
-using PermitScreen.Rating.Structures;
 
 namespace PermitScreen.Service.Mapping;
 
@@ -68,16 +67,7 @@ internal static class StructureGaps
     {
         foreach (var policy in policies)
         {
-            var reasons = new List<Reason>();
-            foreach (var effect in prepared.Rated?.Units.SelectMany(u => u.Effects) ?? [])
-            {
-                DeadLoads.Of(effect, effect.Kind.PositiveSense(), policy.Document.Policy, reasons);
-                foreach (var resistance in effect.Resistances.Where(r => Capacities.Fits(r, policy.Document.Policy)))
-                {
-                    Capacities.Of(effect, resistance, policy.Document.Policy, reasons);
-                }
-            }
-
+            var reasons = (prepared.Rated?.Units.SelectMany(u => u.Effects) ?? []).SelectMany(e => EffectCheck.Gaps(e, policy.Document.Policy));
             foreach (var reason in reasons.Distinct())
             {
                 yield return reason with { Message = $"Under {policy.Document.Name}: {reason.Message}" };

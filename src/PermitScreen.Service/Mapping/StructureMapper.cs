@@ -25,6 +25,13 @@ internal static class StructureMapper
         var name = Names.Structure(faults, "name", structure.Name);
         faults.Text("title", structure.Title, "what people call it");
         Place(structure.Place, faults);
+        if (structure.PostedLimits.Count > 0 && structure.State is not (C.StructureState.Posted or C.StructureState.Closed))
+        {
+            faults.Add("posted_limits", "Limits are posted, but the state is not STRUCTURE_STATE_POSTED; state what holds.");
+        }
+
+        faults.Within("posted_limits", structure.PostedLimits.Count, Limits.Restrictions);
+        faults.Within("dated_restrictions", structure.DatedRestrictions.Count, Limits.Restrictions);
         var inspection = Inspection(structure.Inspection, faults);
         if (!faults.Within("units", structure.Units.Count, Limits.Units))
         {
@@ -174,8 +181,8 @@ internal static class StructureMapper
             return null;
         }
 
-        var left = faults.Optional("left_kerb_m", roadway.HasLeftKerbM, roadway.LeftKerbM, Allowed.Any, "m");
-        var right = faults.Optional("right_kerb_m", roadway.HasRightKerbM, roadway.RightKerbM, Allowed.Any, "m");
+        var left = faults.Within("left_kerb_m", roadway.HasLeftKerbM, roadway.LeftKerbM, Limits.LateralM);
+        var right = faults.Within("right_kerb_m", roadway.HasRightKerbM, roadway.RightKerbM, Limits.LateralM);
         var lanes = faults.Optional("lane_count", roadway.HasLaneCount, roadway.LaneCount, 1, MostLanes);
         var adtt = faults.Optional("adtt_one_direction", roadway.HasAdttOneDirection, roadway.AdttOneDirection, Allowed.NotNegative, "trucks a day");
         if (left is not { } leftM || right is not { } rightM)

@@ -35,7 +35,8 @@ internal static class TrussMapper
         }
 
         var before = faults.Count;
-        if (!faults.Within("nodes", truss.Nodes.Count, Limits.Nodes) || !faults.Within("members", truss.Members.Count, Limits.Members))
+        if (!faults.Within("nodes", truss.Nodes.Count, Limits.Nodes) || !faults.Within("members", truss.Members.Count, Limits.Members)
+            || !faults.Within("supports", truss.Supports.Count, Limits.Supports) || !faults.Within("planes", truss.Planes.Count, Limits.Planes))
         {
             return null;
         }
@@ -68,7 +69,7 @@ internal static class TrussMapper
                 at.Add("plane_id", $"\"{plane.PlaneId}\" names two planes; give each an id of its own.");
             }
 
-            var lateral = at.Optional("lateral_m", plane.HasLateralM, plane.LateralM, Allowed.Any, "m");
+            var lateral = at.Within("lateral_m", plane.HasLateralM, plane.LateralM, Limits.LateralM);
             if (!plane.HasLateralM)
             {
                 gaps.Add(new Reason(ReasonCode.DataMissing, $"The lateral position of plane {plane.PlaneId} is not in the catalogue.", FormattableString.Invariant($"{path}.truss.planes[{i}].lateral_m")));
@@ -100,8 +101,8 @@ internal static class TrussMapper
 
     private static TrussNode Node(C.TrussNode node, FaultList faults) => new(
         node.Name,
-        faults.Required("x_m", node.HasXM, node.XM, Allowed.Any, "m"),
-        faults.Required("y_m", node.HasYM, node.YM, Allowed.Any, "m"));
+        faults.Required("x_m", node.HasXM, node.XM, Limits.ChainageM),
+        faults.Required("y_m", node.HasYM, node.YM, Limits.LateralM));
 
     private static TrussMember Member(C.TrussMember member, int index, string path, FaultList faults, List<Reason> gaps)
     {
@@ -132,9 +133,9 @@ internal static class TrussMapper
 
                 return new DeckEnd(DeckEndKind.EndFloorBeam, 0);
             case C.DeckEndKind.SeatedOnAbutment:
-                return new DeckEnd(DeckEndKind.SeatedOnAbutment, faults.Required("tip_m", end!.HasTipM, end.TipM, Allowed.Any, "m: where the stringers are seated"));
+                return new DeckEnd(DeckEndKind.SeatedOnAbutment, faults.Required("tip_m", end!.HasTipM, end.TipM, Limits.ChainageM));
             case C.DeckEndKind.OverhangingStringers:
-                return new DeckEnd(DeckEndKind.OverhangingStringers, faults.Required("tip_m", end!.HasTipM, end.TipM, Allowed.Any, "m: the tip of the overhang"));
+                return new DeckEnd(DeckEndKind.OverhangingStringers, faults.Required("tip_m", end!.HasTipM, end.TipM, Limits.ChainageM));
             default:
                 faults.Add("kind", "Missing; say end floor beam, seated on the abutment, or overhanging stringers.");
                 return default;

@@ -17,7 +17,7 @@ internal static class UnitMapper
     {
         var gaps = new List<Reason>();
         Names.Id(faults, "unit_id", unit.UnitId, "main-span");
-        var start = faults.Optional("start_chainage_m", unit.HasStartChainageM, unit.StartChainageM, Allowed.Any, "m");
+        var start = faults.Within("start_chainage_m", unit.HasStartChainageM, unit.StartChainageM, Limits.ChainageM);
         if (!unit.HasStartChainageM)
         {
             gaps.Add(new Reason(ReasonCode.DataMissing, "The chainage of the unit's datum is not in the catalogue.", $"{path}.start_chainage_m"));

@@ -58,12 +58,27 @@ internal static class VehicleMapper
         }
 
         var laterals = Laterals(train, path, gaps);
+        CheckWidth(train, width, faults);
         if (faults.Count > before)
         {
             return null;
         }
 
         return AxleTrain.TryCreate(loads, offsets, faults) is { } axles && gaps.Count == gapsBefore ? new PermitVehicle(axles, width!.Value, laterals) : null;
+    }
+
+    /// <summary>An axle that reaches beyond the width over tyres means that one of the two is wrong.</summary>
+    private static void CheckWidth(C.AxleTrain train, double? widthM, FaultList faults)
+    {
+        for (var i = 0; i < train.Axles.Count; i++)
+        {
+            var axle = train.Axles[i];
+            var reachM = Math.Abs(axle.LateralOffsetM) + (axle.HasGaugeM ? axle.GaugeM / 2 : 0);
+            if (widthM is { } width && reachM > width / 2)
+            {
+                faults.At("axles", i).Add("gauge_m", $"The outer wheels stand {Fields.Text(reachM)} m off the centreline; half the width over tyres is {Fields.Text(width / 2)} m.");
+            }
+        }
     }
 
     private static C.Axle.PlaceOneofCase Form(C.AxleTrain train, FaultList faults)
@@ -83,7 +98,7 @@ internal static class VehicleMapper
         switch (axle.PlaceCase)
         {
             case C.Axle.PlaceOneofCase.OffsetM:
-                var offset = faults.Required("offset_m", has: true, axle.OffsetM, Allowed.NotNegative, "m");
+                var offset = faults.Required("offset_m", has: true, axle.OffsetM, Limits.LateralM);
                 if (index == 0 && offset != 0)
                 {
                     faults.Add("offset_m", $"Found {Fields.Text(axle.OffsetM)}; the lead axle has offset 0.");
@@ -95,7 +110,12 @@ internal static class VehicleMapper
 
                 return offset;
             case C.Axle.PlaceOneofCase.GapM:
-                var gap = faults.Required("gap_m", has: true, axle.GapM, Allowed.NotNegative, "m");
+                var gap = faults.Required("gap_m", has: true, axle.GapM, Limits.LateralM);
+                if (gap < 0)
+                {
+                    faults.Add("gap_m", $"Found {Fields.Text(axle.GapM)}; allowed is a number of 0 or more, m.");
+                }
+
                 if (index == 0 && gap != 0)
                 {
                     faults.Add("gap_m", "The lead axle has no axle in front of it; leave its gap out.");

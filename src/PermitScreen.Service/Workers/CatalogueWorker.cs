@@ -3,7 +3,6 @@ using Microsoft.Extensions.Hosting;
 using Microsoft.Extensions.Logging;
 using PermitScreen.Catalogue.Lines;
 using PermitScreen.Catalogue.Snapshots;
-using PermitScreen.Service.Files;
 
 namespace PermitScreen.Service.Workers;
 
@@ -54,7 +53,9 @@ public sealed partial class CatalogueWorker(
         {
             LogStopped(logger);
         }
-        catch (Exception error) when (error is FileFaultsException or IOException or UnauthorizedAccessException)
+#pragma warning disable CA1031 // Whatever it is, calls that wait must be told, and a service without its catalogue must not look alive.
+        catch (Exception error)
+#pragma warning restore CA1031
         {
             failure.Reason = error;
             holder.Refuse(error);

@@ -61,14 +61,16 @@ public sealed class DeletionTests(DeletionCounts counts) : IClassFixture<Deletio
     }
 
     [Fact]
-    public void A_resistance_of_another_level_does_not_come_to_fit_by_losing_its_level()
+    public void A_weaker_resistance_marked_with_another_level_still_counts_where_the_method_knows_no_levels()
     {
         var (application, structures, policy) = ContractFiles.HandWorked("01-pass-with-traffic");
         var resistance = structures[0].Units[0].Effects.First(e => e.Rated is not null).Rated.Resistances[0];
-        resistance.Level = RatingLevel.Inventory;
+        var splice = resistance.Clone();
+        splice.Level = RatingLevel.Legal;
+        splice.NominalKn /= 100;
+        structures[0].Units[0].Effects.First(e => e.Rated is not null).Rated.Resistances.Add(splice);
         var screen = new InProcess(application, structures, policy, ContractFiles.HandWorkedDay);
-        Assert.Equal(Verdict.NotAssessed, screen.Screen().Verdict);
-        Judge("a level that does not fit", screen, [0], ofApplication: false, ofPolicy: true);
+        Assert.Equal(Verdict.Fail, screen.Screen().Verdict);
     }
 
     [Fact]
