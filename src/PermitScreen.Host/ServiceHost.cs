@@ -6,6 +6,7 @@ using Microsoft.AspNetCore.Server.Kestrel.Core;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.Hosting;
 using Microsoft.Extensions.Logging;
+using Microsoft.Extensions.Logging.Console;
 using PermitScreen.Service;
 using PermitScreen.Service.Workers;
 
@@ -32,8 +33,16 @@ public static class ServiceHost
             o.TimestampFormat = "yyyy-MM-ddTHH:mm:ss.fffZ ";
             o.UseUtcTimestamp = true;
         });
-        builder.Logging.SetMinimumLevel(settings.Quiet ? LogLevel.Warning : LogLevel.Information);
-        builder.Logging.AddFilter("Microsoft.AspNetCore", LogLevel.Warning);
+        builder.Services.Configure<ConsoleLoggerOptions>(o => o.LogToStandardErrorThreshold = LogLevel.Trace);
+        builder.Logging.SetMinimumLevel(settings.Quiet ? LogLevel.Error : LogLevel.Information);
+        if (settings.Quiet)
+        {
+            // Why a start failed is told by the command itself, once.
+            builder.Logging.AddFilter(typeof(CatalogueWorker).FullName, LogLevel.None);
+            builder.Logging.AddFilter("Microsoft.Extensions.Hosting", LogLevel.None);
+        }
+
+        builder.Logging.AddFilter("Microsoft.AspNetCore", settings.Quiet ? LogLevel.None : LogLevel.Warning);
         builder.Logging.AddFilter("Grpc", LogLevel.Warning);
 
         // Each question for readiness would log an error until the lines are ready; the worker logs its progress itself.

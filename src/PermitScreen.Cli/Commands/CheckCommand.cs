@@ -21,13 +21,15 @@ internal static class CheckCommand
         service.AddTo(command);
         command.SetAction(async (parsed, cancellation) =>
         {
-            var files = parsed.GetValue(paths)!.SelectMany(FolderFiles.Of).ToList();
+            // Applications last: they may cross structures that are checked beside them.
+            var files = parsed.GetValue(paths)!.SelectMany(FolderFiles.Of).Distinct()
+                .OrderBy(f => ContractFile.SchemaOf(File.ReadAllText(f)) == FileSchemas.Application).ToList();
             if (files.Count == 0)
             {
                 throw new BadInputException("There is no JSON file in what was named.");
             }
 
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: false, cancellation);
             var findings = new Findings(parsed.GetValue(json));
             foreach (var file in files)
             {
@@ -44,13 +46,17 @@ internal static class CheckCommand
     {
         var text = await File.ReadAllTextAsync(file, cancellation);
         var faults = new FaultList();
-        switch (SchemaOf(text))
+        switch (ContractFile.SchemaOf(text))
         {
             case FileSchemas.Policy:
                 if (FileSchemas.ReadPolicy(text, faults)?.Policy is { } policy)
                 {
                     var answer = await connection.Policies.ValidatePolicyAsync(new ValidatePolicyRequest { Policy = policy }, connection.Call(cancellation));
                     findings.Add("fault", file, policy.Name, answer.Faults);
+                    if (answer.Faults.Count == 0)
+                    {
+                        findings.Checked(file, policy.Name, "policy", 0);
+                    }
                 }
 
                 break;
@@ -69,7 +75,11 @@ internal static class CheckCommand
                         var answer = await connection.Catalogue.ValidateStructureAsync(new ValidateStructureRequest { Structure = structure }, connection.Call(cancellation));
                         findings.Add("fault", file, structure.Name, answer.Faults);
                         findings.Add("gap", file, structure.Name, answer.Gaps);
-                        findings.Checked(file, structure, answer);
+                        findings.AddStructure(file, structure.Name);
+                        if (answer.Faults.Count == 0)
+                        {
+                            findings.Checked(file, structure.Name, FormattableString.Invariant($"{answer.EffectCount} influence lines"), answer.Gaps.Count);
+                        }
                     }
                 }
 
@@ -82,10 +92,23 @@ internal static class CheckCommand
     private static async Task CheckApplicationAsync(string file, Application application, ServiceConnection connection, Findings findings, CancellationToken cancellation)
     {
         var policies = await connection.Policies.ListPoliciesAsync(new ListPoliciesRequest(), connection.Call(cancellation));
+        if (policies.Policies.Count == 0)
+        {
+            throw new BadInputException("The service has no policy, so that an application cannot be checked.");
+        }
+
         var request = new ScreenApplicationRequest { Application = application, Policy = policies.Policies[0].Name, ValidateOnly = true };
         try
         {
-            await connection.Screening.ScreenApplicationAsync(request, connection.Call(cancellation));
+            var answer = await connection.Screening.ScreenApplicationAsync(request, connection.Call(cancellation));
+            var gaps = answer.Gaps.Where(g => !findings.Structures.Any(s => g.Description.StartsWith(s + " is not in", StringComparison.Ordinal))).ToList();
+            findings.Add("gap", file, application.Reference, gaps);
+            findings.Checked(file, application.Reference, "application", gaps.Count);
+        }
+        catch (RpcException error) when (error.StatusCode == StatusCode.FailedPrecondition)
+        {
+            // The policy cannot be used today; the application itself was read without fault.
+            findings.Checked(file, application.Reference, "application", 0);
         }
         catch (RpcException error) when (error.GetRpcStatus()?.GetDetail<BadRequest>() is not null)
         {
@@ -94,26 +117,12 @@ internal static class CheckCommand
         }
     }
 
-    /// <summary>The schema that a text names, as far as it can be told; reading it will say what is wrong.</summary>
-    private static string SchemaOf(string text)
-    {
-        try
-        {
-            using var document = JsonDocument.Parse(text);
-            return document.RootElement.ValueKind == JsonValueKind.Object
-                && document.RootElement.TryGetProperty("schema", out var schema)
-                && schema.ValueKind == JsonValueKind.String
-                    ? schema.GetString()!
-                    : "";
-        }
-        catch (JsonException)
-        {
-            return "";
-        }
-    }
-
     private sealed class Findings(bool json)
     {
+        private readonly HashSet<string> _structures = new(StringComparer.Ordinal);
+
+        public IEnumerable<string> Structures => _structures;
+
         public int Faults { get; private set; }
 
         public int Gaps { get; private set; }
@@ -137,11 +146,20 @@ internal static class CheckCommand
             }
         }
 
-        public void Checked(string file, Structure structure, ValidateStructureResponse answer)
+        public void Checked(string file, string resource, string what, int gaps)
         {
-            if (!json && answer.Faults.Count == 0)
+            if (!json)
             {
-                Console.Out.WriteLine(FormattableString.Invariant($"ok    {file} {structure.Name}: {answer.EffectCount} influence lines, {answer.Gaps.Count} gaps"));
+                Console.Out.WriteLine(FormattableString.Invariant($"{(gaps == 0 ? "ok" : "read"),-5} {file} {resource}: {what}, {gaps} gaps"));
+            }
+        }
+
+        /// <summary>Keeps a name, and tells where it stands twice: the service would refuse to start.</summary>
+        public void AddStructure(string file, string name)
+        {
+            if (!_structures.Add(name))
+            {
+                Add("fault", file, name, [new FieldFault { Field = "structures.name", Description = "This structure stands more than once in what is checked." }]);
             }
         }
 

@@ -18,7 +18,7 @@ internal static class ListCommand
         service.AddTo(command);
         command.SetAction(async (parsed, cancellation) =>
         {
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: true, cancellation);
             var structures = await StructuresAsync(connection, cancellation);
             var policies = await connection.Policies.ListPoliciesAsync(new ListPoliciesRequest(), connection.Call(cancellation));
             if (parsed.GetValue(json))
@@ -59,7 +59,7 @@ internal static class ListCommand
         var token = "";
         do
         {
-            var page = await connection.Catalogue.ListStructuresAsync(new ListStructuresRequest { PageSize = 1000, PageToken = token }, connection.Call(cancellation));
+            var page = await connection.Catalogue.ListStructuresAsync(new ListStructuresRequest { PageSize = 50, PageToken = token }, connection.Call(cancellation));
             all.AddRange(page.Structures);
             token = page.NextPageToken;
         }

@@ -23,7 +23,7 @@ internal static class ScreenCommand
         {
             var application = ApplicationInput.Read(parsed.GetValue(file)!);
             var date = ApplicationInput.Date(parsed.GetValue(asOf));
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: true, cancellation);
             var name = parsed.GetValue(policy) ?? await OnlyPolicyAsync(connection, cancellation);
             var full = parsed.GetValue(json) || parsed.GetValue(arithmetic);
             var screening = await RunAsync(connection, application, name, date, full, cancellation);

@@ -26,7 +26,7 @@ internal static class ShowCommand
         {
             var resource = parsed.GetValue(name)!;
             resource = resource.Contains('/', StringComparison.Ordinal) ? resource : "structures/" + resource;
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: true, cancellation);
             var structure = (await connection.Catalogue.GetStructureAsync(new GetStructureRequest { Name = resource }, connection.Call(cancellation))).Structure;
             var lines = await LinesAsync(connection, resource, parsed.GetValue(effect)!, cancellation);
             if (parsed.GetValue(json))

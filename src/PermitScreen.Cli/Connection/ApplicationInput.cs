@@ -11,7 +11,7 @@ internal static class ApplicationInput
     /// <summary>The application of a file.</summary>
     public static Application Read(string path)
     {
-        var text = File.Exists(path) ? File.ReadAllText(path) : throw new BadInputException($"There is no file {path}.");
+        var text = File.Exists(path) ? File.ReadAllText(path) : throw new BadInputException(path.StartsWith("--", StringComparison.Ordinal) ? $"{path} is no option of this command, and no file." : $"There is no file {path}.");
         var faults = new FaultList();
         if (FileSchemas.ReadApplication(text, faults) is { Application: { } application })
         {

@@ -37,7 +37,11 @@ internal sealed class ServiceConnection : IAsyncDisposable
     public PolicyService.PolicyServiceClient Policies => new(_channel);
 
     /// <summary>Opens what the options ask for.</summary>
-    public static async Task<ServiceConnection> OpenAsync(ServiceOptions options, ParseResult parsed, CancellationToken cancellation)
+    /// <param name="options">Options.</param>
+    /// <param name="parsed">What the user wrote.</param>
+    /// <param name="needsCatalogue">Whether the command asks for structures; checking files does not.</param>
+    /// <param name="cancellation">Ends the wait.</param>
+    public static async Task<ServiceConnection> OpenAsync(ServiceOptions options, ParseResult parsed, bool needsCatalogue, CancellationToken cancellation)
     {
         var timeout = parsed.GetValue(options.Timeout);
         if (timeout is not (> 0 and < 86400))
@@ -60,7 +64,10 @@ internal sealed class ServiceConnection : IAsyncDisposable
                 : throw new BadInputException($"--server is an address such as http://127.0.0.1:5080; found \"{server}\".");
         }
 
-        return await StartAsync(SourceOf(catalogue, policies), 0, TimeSpan.FromSeconds(timeout), cancellation);
+        var source = needsCatalogue || catalogue.Length > 0
+            ? SourceOf(catalogue, policies)
+            : new CatalogueSource([], policies.Length > 0 ? policies : [Path.Combine(DemoFolder.Find(), "policies")]);
+        return await StartAsync(source, 0, TimeSpan.FromSeconds(timeout), cancellation);
     }
 
     /// <summary>Starts a service of this process and waits until its catalogue is ready.</summary>
@@ -88,9 +95,21 @@ internal sealed class ServiceConnection : IAsyncDisposable
     }
 
     /// <summary>What a command reads where the user names nothing: the demo.</summary>
-    public static CatalogueSource SourceOf(string[] catalogue, string[] policies) => new(
-        catalogue.Length > 0 ? catalogue : [Path.Combine(DemoFolder.Find(), "catalogue")],
-        policies.Length > 0 ? policies : [Path.Combine(DemoFolder.Find(), "policies")]);
+    public static CatalogueSource SourceOf(string[] catalogue, string[] policies)
+    {
+        if (catalogue.Length == 0 && policies.Length == 0)
+        {
+            return new CatalogueSource([Path.Combine(DemoFolder.Find(), "catalogue")], [Path.Combine(DemoFolder.Find(), "policies")]);
+        }
+
+        // The demo's policy must not judge somebody's own bridges, nor somebody's policy the demo's, without being asked for.
+        return (catalogue.Length, policies.Length) switch
+        {
+            ( > 0, 0) => throw new BadInputException("Name the policies too, for instance --policies deploy/policies; the demo's policy is for demo data only."),
+            (0, > 0) => throw new BadInputException("Name the catalogue too, for instance --catalogue deploy/demo/catalogue."),
+            _ => new CatalogueSource(catalogue, policies),
+        };
+    }
 
     /// <summary>Deadline and cancellation of a call.</summary>
     public CallOptions Call(CancellationToken cancellation) =>

@@ -39,7 +39,7 @@ internal sealed class CrossingPrinter(Action<string> line, int number, CrossingR
 
         if (crossing.Governing is { } governing)
         {
-            line($"   Governs            {Numbers.Words(governing.Effect)}{(governing.Effect.Element.Length > 0 ? $" ({governing.Effect.Element})" : "")}, configuration {governing.ConfigurationId}");
+            line($"   {(crossing.HasRatingFactor || governing.RatingFactorState != RatingFactorState.Number ? "Governs           " : "Least assessed    ")} {Numbers.Words(governing.Effect)}{(governing.Effect.Element.Length > 0 ? $" ({governing.Effect.Element})" : "")}, configuration {governing.ConfigurationId}");
             if (governing.LiveLoads.Count > 0 && governing.LiveLoads[0].Position is not null)
             {
                 line($"   Vehicle            {Place(governing.LiveLoads[0])}");
@@ -48,6 +48,7 @@ internal sealed class CrossingPrinter(Action<string> line, int number, CrossingR
             if (arithmetic)
             {
                 Arithmetic(governing);
+                Next();
             }
         }
 
@@ -77,10 +78,20 @@ internal sealed class CrossingPrinter(Action<string> line, int number, CrossingR
 
         line(result.RatingFactorState switch
         {
-            RatingFactorState.Number => $"   Rating factor      RF = N / {Numbers.Kn(result.Denominator)} = {Numbers.Factor(true, result.RatingFactor)}; k = {Numbers.Factor(result.HasLargestAxleFactor, result.LargestAxleFactor)}",
+            RatingFactorState.Number => $"   Rating factor      RF = {Numbers.Kn(result.Numerator)} / {Numbers.Kn(result.Denominator)} = {Numbers.FourDecimals(result.RatingFactor)}, shown as {Numbers.Factor(true, result.RatingFactor)}; k = {Numbers.Factor(result.HasLargestAxleFactor, result.LargestAxleFactor)}",
             RatingFactorState.NoLiveLoad => "   Rating factor      not applicable: no live load in this sense",
             _ => "   Rating factor      none: dead load alone exceeds the capacity; k = 0",
         });
+    }
+
+    /// <summary>The effects that come next on the rung whose governing effect is shown.</summary>
+    private void Next()
+    {
+        var rung = crossing.Rungs.LastOrDefault(r => r.Governing is { } g && g.Equals(crossing.Governing));
+        foreach (var effect in rung?.Next ?? [])
+        {
+            line($"   Next               RF {Numbers.Factor(effect.HasRatingFactor, effect.RatingFactor)}, k {Numbers.Factor(effect.HasLargestAxleFactor, effect.LargestAxleFactor)}: {effect.Effect.EffectId} {Numbers.Words(effect.Effect.Sense)}, {effect.Effect.PlaneId}");
+        }
     }
 
     private static string Place(LiveLoadArithmetic load)
@@ -114,6 +125,12 @@ internal sealed class CrossingPrinter(Action<string> line, int number, CrossingR
         {
             var names = string.Join(", ", group.Select(n => $"{n.Effect.EffectId} {n.Effect.PlaneId}").Distinct());
             line($"   Not rated          {names}: {group.Key}");
+        }
+
+        var left = groups.Skip(MostNotRated).SelectMany(g => g).Select(n => $"{n.Effect.EffectId} {n.Effect.PlaneId}").Distinct().ToList();
+        if (left.Count > 0)
+        {
+            line(string.Create(CultureInfo.InvariantCulture, $"   Not rated          and {left.Count} more for other reasons: {string.Join(", ", left)}; --json has the reasons"));
         }
     }
 

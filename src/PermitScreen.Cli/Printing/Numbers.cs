@@ -20,7 +20,10 @@ internal static class Numbers
         return (Math.Truncate(value * scale) / scale).ToString("0.00", CultureInfo.InvariantCulture);
     }
 
-    public static string Kn(double value) => value.ToString("0.0", CultureInfo.InvariantCulture);
+    public static string Kn(double value) => value.ToString("0.00", CultureInfo.InvariantCulture);
+
+    /// <summary>A factor with four decimals, truncated.</summary>
+    public static string FourDecimals(double value) => (Math.Truncate(value * 10000) / 10000).ToString("0.0000", CultureInfo.InvariantCulture);
 
     public static string Plain(double value) => value.ToString("0.###", CultureInfo.InvariantCulture);
 

@@ -53,11 +53,11 @@ internal sealed class ScreeningPrinter(IAnsiConsole console, Contracts.V1.Screen
                 new Text(Numbers.Factor(crossing.HasRatingFactor, crossing.RatingFactor)),
                 new Text(Numbers.Factor(crossing.HasLargestAxleFactor, crossing.LargestAxleFactor)),
                 new Text(crossing.RungId.Length > 0 ? crossing.RungId : Reasons(crossing)),
-                new Text(crossing.Governing is { } governing ? $"{governing.Effect.EffectId} {Numbers.Words(governing.Effect.Sense)}, {governing.Effect.PlaneId}" : "-"));
+                new Text(crossing is { Governing: { } governing, HasRatingFactor: true } ? $"{governing.Effect.EffectId} {Numbers.Words(governing.Effect.Sense)}, {governing.Effect.PlaneId}" : "-"));
         }
 
         console.Write(table);
-        Line("RF scales all live load, k the permit's axle loads alone; both truncated. Where a crossing does not pass, they are those of the last rung available.");
+        Line("RF scales all live load, k the permit's axle loads alone; both are shown truncated, never rounded up. They are those of the members on the first rung that passes, or else on the last one available, whatever standing and fit say.");
     }
 
     private static string Reasons(CrossingResult crossing) =>
@@ -89,8 +89,8 @@ internal sealed class ScreeningPrinter(IAnsiConsole console, Contracts.V1.Screen
     /// <summary>Writes a line, broken at spaces where it is too long, with what follows set in.</summary>
     private void Line(string text)
     {
-        const int SetIn = 22;
-        var width = Math.Max(console.Profile.Width, 2 * SetIn) - 1;
+        var setIn = text.StartsWith("   ", StringComparison.Ordinal) ? 22 : 9;
+        var width = Math.Max(console.Profile.Width, 4 * setIn) - 1;
         var indent = "";
         while (indent.Length + text.Length > width)
         {
@@ -102,7 +102,7 @@ internal sealed class ScreeningPrinter(IAnsiConsole console, Contracts.V1.Screen
 
             console.WriteLine(indent + text[..at]);
             text = text[(at + 1)..];
-            indent = new string(' ', SetIn);
+            indent = new string(' ', setIn);
         }
 
         console.WriteLine(indent + text);

@@ -41,7 +41,10 @@ public static class Capacities
         var lossInstead = resistance.IncludesMeasuredLoss == true && !rules.ConditionFactorOnMeasuredLoss;
         if (effect.Condition.Own is null && HasMeasuredLoss(effect))
         {
-            Missing("includes_measured_loss", "A member with measured loss states its own condition rating, and this one does not");
+            reasons.Add(new Reason(
+                ReasonCode.DataMissing,
+                $"A member with measured loss states its own condition rating, and this one does not: give condition_rating, 0 to 9 ({effect.Description}, {effect.PlaneId}).",
+                $"{effect.Path}.rated.condition_rating"));
         }
 
         var condition = conditionIncluded || lossInstead ? 1.0 : ConditionFactor(effect, rules, reasons);

@@ -35,7 +35,7 @@ public static class EffectCheck
             return null;
         }
 
-        if (LeastCapacity(effect, sense, load.Policy, reasons) is not var (capacity, element))
+        if (LeastCapacity(effect, sense, load.Policy, WhyNeeded(lineActs, liveKn, deadKn), reasons) is not var (capacity, element))
         {
             return null;
         }
@@ -80,7 +80,7 @@ public static class EffectCheck
             var lineActs = sense.Sign() > 0 ? effect.Line.HasPositive : effect.Line.HasNegative;
             if (DeadLoads.Of(effect, sense, policy, reasons) is { } deadLoads && (lineActs || DeadLoads.Sum(deadLoads) > 0))
             {
-                LeastCapacity(effect, sense, policy, reasons);
+                LeastCapacity(effect, sense, policy, WhyNeeded(lineActs, 0, DeadLoads.Sum(deadLoads)), reasons);
             }
         }
 
@@ -88,7 +88,7 @@ public static class EffectCheck
     }
 
     /// <summary>Several resistances per sense are allowed; the least governs and its element is named (rule D1).</summary>
-    private static (CapacityArithmetic Capacity, string Element)? LeastCapacity(RatedEffect effect, EffectSense sense, Policy policy, List<Reason> reasons)
+    private static (CapacityArithmetic Capacity, string Element)? LeastCapacity(RatedEffect effect, EffectSense sense, Policy policy, string whyNeeded, List<Reason> reasons)
     {
         if (effect.NoHoldDown && sense == EffectSense.Uplift)
         {
@@ -115,12 +115,17 @@ public static class EffectCheck
         if (least is null)
         {
             reasons.Add(ofSense.IsEmpty
-                ? new Reason(ReasonCode.DataMissing, $"No resistance in {Words(sense)} for {effect.Description} ({effect.PlaneId}).", $"{effect.Path}.rated.resistances")
+                ? new Reason(ReasonCode.DataMissing, $"No resistance in {Words(sense)} for {effect.Description} ({effect.PlaneId}), {whyNeeded}.", $"{effect.Path}.rated.resistances")
                 : new Reason(ReasonCode.MethodMismatch, $"No resistance of the policy's method, limit state and level in {Words(sense)} for {effect.Description} ({effect.PlaneId}).", $"{effect.Path}.rated.resistances"));
         }
 
         return least;
     }
+
+    private static string WhyNeeded(bool lineActs, double liveKn, double deadKn) =>
+        lineActs || liveKn > 0
+            ? "which its influence line can bring"
+            : FormattableString.Invariant($"into which its factored dead load of {deadKn:0.0} kN puts it; check the sign of the dead load (tension +, compression -, reaction up +)");
 
     private static string Words(EffectSense sense) => sense.ToString().ToLowerInvariant();
 }

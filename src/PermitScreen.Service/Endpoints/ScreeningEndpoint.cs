@@ -53,7 +53,9 @@ public sealed class ScreeningEndpoint(ICatalogue catalogue, PolicyShelf policies
 
         if (request.ValidateOnly)
         {
-            return new ScreenApplicationResponse();
+            var checkedOnly = new ScreenApplicationResponse();
+            checkedOnly.Gaps.AddRange(ApplicationGaps.Of(application, snapshot).Select(ReasonWriter.WriteGap));
+            return checkedOnly;
         }
 
         var result = RouteScreening.Of(application, document, snapshot, asOf, context.CancellationToken);

@@ -1,3 +1,4 @@
+using System.Text.Json;
 using Google.Protobuf;
 using PermitScreen.Mechanics.Faults;
 
@@ -9,6 +10,25 @@ public static class ContractFile
     private const int MostDepth = 64;
     private static readonly JsonParser Parser = new(JsonParser.Settings.Default.WithRecursionLimit(MostDepth));
 
+    /// <summary>The schema that a text names; empty where it names none or is no JSON.</summary>
+    /// <param name="json">Text.</param>
+    public static string SchemaOf(string json)
+    {
+        try
+        {
+            using var document = JsonDocument.Parse(json);
+            return document.RootElement.ValueKind == JsonValueKind.Object
+                && document.RootElement.TryGetProperty("schema", out var schema)
+                && schema.ValueKind == JsonValueKind.String
+                    ? schema.GetString()!
+                    : "";
+        }
+        catch (JsonException)
+        {
+            return "";
+        }
+    }
+
     /// <summary>The message of a text, or null with faults: unknown fields with the nearest known name, wrong values, a wrong schema.</summary>
     /// <typeparam name="T">Kind of file.</typeparam>
     /// <param name="json">Text.</param>
@@ -19,6 +39,12 @@ public static class ContractFile
         where T : class, IMessage<T>, new()
     {
         var before = faults.Count;
+        if (SchemaOf(json) is { Length: > 0 } found && found != schema && FileSchemas.Kinds.TryGetValue(found, out var kind))
+        {
+            faults.Add("schema", $"This is {kind} (\"{found}\"), not {FileSchemas.Kinds[schema]} (\"{schema}\").");
+            return null;
+        }
+
         JsonShape.Check(json, new T().Descriptor, faults);
         if (faults.Count > before)
         {

@@ -15,6 +15,14 @@ public static class FileSchemas
     /// <summary>Schema of application files.</summary>
     public const string Application = "permitscreen/application/1";
 
+    /// <summary>Words for each kind of file.</summary>
+    public static IReadOnlyDictionary<string, string> Kinds { get; } = new Dictionary<string, string>(StringComparer.Ordinal)
+    {
+        [Catalogue] = "a catalogue file",
+        [Policy] = "a policy file",
+        [Application] = "an application file",
+    };
+
     /// <summary>Reads a catalogue file.</summary>
     /// <param name="json">Text.</param>
     /// <param name="faults">Takes every fault.</param>

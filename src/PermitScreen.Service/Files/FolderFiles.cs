@@ -8,6 +8,11 @@ public static class FolderFiles
     /// <exception cref="FileNotFoundException">There is neither.</exception>
     public static IReadOnlyList<string> Of(string path)
     {
+        if (path.StartsWith("--", StringComparison.Ordinal))
+        {
+            throw new FileNotFoundException($"{path} is no option of this command, and no file or folder.", path);
+        }
+
         if (File.Exists(path))
         {
             return [path];
@@ -20,4 +25,11 @@ public static class FolderFiles
 
         throw new FileNotFoundException($"There is no file or folder {path}.", path);
     }
+
+    /// <summary>The JSON files of a path that are of a kind: in a folder those of another kind are passed over, a file named by itself never is.</summary>
+    /// <param name="path">File or folder.</param>
+    /// <param name="schema">Schema of the kind.</param>
+    /// <exception cref="FileNotFoundException">There is neither.</exception>
+    public static IEnumerable<string> Of(string path, string schema) =>
+        Of(path).Where(file => file == path || !FileSchemas.Kinds.ContainsKey(ContractFile.SchemaOf(File.ReadAllText(file))) || ContractFile.SchemaOf(File.ReadAllText(file)) == schema);
 }

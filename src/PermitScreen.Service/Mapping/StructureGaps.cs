@@ -1,6 +1,7 @@
 using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Rating.Checks;
 using PermitScreen.Rating.Ladder;
+using PermitScreen.Rating.Policies;
 
 namespace PermitScreen.Service.Mapping;
 
@@ -68,6 +69,13 @@ internal static class StructureGaps
         foreach (var policy in policies)
         {
             var reasons = (prepared.Rated?.Units.SelectMany(u => u.Effects) ?? []).SelectMany(e => EffectCheck.Gaps(e, policy.Document.Policy));
+            var rules = policy.Document.Standing;
+            if (prepared.Record.Inspection?.SuperstructureCondition is { } condition && condition <= rules.PoorUpToRating && rules.PoorCondition == DoubtRule.NotAssessed)
+            {
+                var poor = FormattableString.Invariant($"A superstructure rated {condition} is in poor condition and is not assessed.");
+                reasons = reasons.Append(new Reason(ReasonCode.PoorCondition, poor, "inspection.superstructure_condition"));
+            }
+
             foreach (var reason in reasons.Distinct())
             {
                 yield return reason with { Message = $"Under {policy.Document.Name}: {reason.Message}" };

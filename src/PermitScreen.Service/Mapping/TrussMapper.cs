@@ -12,6 +12,9 @@ internal static class TrussMapper
 {
     private const double KnPerMn = 1000.0;
 
+    /// <summary>Distance from the deck's line, as a part of the panel, up to which a joint counts as on it (cambered and sloping decks).</summary>
+    private const double NearDeck = 0.1;
+
     /// <summary>The truss, or null: with faults where it is malformed, with a gap where it is given by its outline alone.</summary>
     public static TrussModel? Model(C.TrussUnit truss, string path, FaultList faults, List<Reason> gaps)
     {
@@ -52,7 +55,13 @@ internal static class TrussMapper
 
         var start = End(truss.Deck.Start, faults.Under("deck").Under("start"));
         var end = End(truss.Deck.End, faults.Under("deck").Under("end"));
-        return faults.Count > before ? null : TrussModel.TryCreate(nodes, members, supports, truss.Deck.PanelPoints, start, end, faults);
+        if (faults.Count > before || TrussModel.TryCreate(nodes, members, supports, truss.Deck.PanelPoints, start, end, faults) is not { } model)
+        {
+            return null;
+        }
+
+        RequirePanelPoints(truss.Deck, model, path, gaps);
+        return model;
     }
 
     /// <summary>Planes from left to right.</summary>
@@ -97,6 +106,29 @@ internal static class TrussMapper
 
         // Without its place a plane has no share; the gap above keeps the unit from being passed, and an empty list from being rated.
         return planes.Exists(p => double.IsNaN(p.LateralM)) ? [] : [.. planes.OrderBy(p => p.LateralM)];
+    }
+
+    /// <summary>
+    /// A panel point left out of the deck would halve its panel's line without a trace: a joint near the deck's line between its ends is one, or is said not to be.
+    /// </summary>
+    private static void RequirePanelPoints(C.TrussDeck deck, TrussModel model, string path, List<Reason> gaps)
+    {
+        var joints = model.Nodes.ToDictionary(n => n.Name, StringComparer.Ordinal);
+        for (var i = 1; i < deck.PanelPoints.Count; i++)
+        {
+            var (a, b) = (joints[deck.PanelPoints[i - 1]], joints[deck.PanelPoints[i]]);
+            foreach (var node in model.Nodes.Where(n => n.XM > a.XM && n.XM < b.XM && !deck.JointsWithoutFloorBeam.Contains(n.Name)))
+            {
+                var lineM = a.YM + (b.YM - a.YM) * (node.XM - a.XM) / (b.XM - a.XM);
+                if (Math.Abs(node.YM - lineM) <= NearDeck * (b.XM - a.XM))
+                {
+                    gaps.Add(new Reason(
+                        ReasonCode.DataMissing,
+                        $"Joint {node.Name} lies on the deck's line between {a.Name} and {b.Name} and is no panel point; add it to panel_points, or to joints_without_floor_beam.",
+                        $"{path}.truss.deck.panel_points"));
+                }
+            }
+        }
     }
 
     private static TrussNode Node(C.TrussNode node, FaultList faults) => new(

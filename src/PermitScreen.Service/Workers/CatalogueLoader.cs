@@ -26,7 +26,7 @@ public sealed class CatalogueLoader(LineCache lines)
     {
         var faulty = new List<(string File, Fault Fault)>();
         var found = new List<(string File, int Index, Structure Structure)>();
-        foreach (var path in paths.SelectMany(FolderFiles.Of))
+        foreach (var path in paths.SelectMany(p => FolderFiles.Of(p, FileSchemas.Catalogue)))
         {
             var faults = new FaultList();
             if (FileSchemas.ReadCatalogue(File.ReadAllText(path), faults) is { } file)

@@ -14,7 +14,7 @@ public static class PolicyLoader
     {
         var policies = new List<ShelvedPolicy>();
         var faulty = new List<(string File, Fault Fault)>();
-        foreach (var path in paths.SelectMany(FolderFiles.Of))
+        foreach (var path in paths.SelectMany(p => FolderFiles.Of(p, FileSchemas.Policy)))
         {
             var faults = new FaultList();
             if (FileSchemas.ReadPolicy(File.ReadAllText(path), faults)?.Policy is { } contract)
