@@ -12,6 +12,9 @@ namespace PermitScreen.Catalogue.Snapshots;
 /// <summary>Turns a revision into what can be screened: lines, one rated effect per plane, and what is missing.</summary>
 public static class StructurePreparation
 {
+    /// <summary>Rounding of coordinates, m.</summary>
+    private const double DeckRoundingM = 1e-6;
+
     /// <summary>Prepares a revision; null with faults where a truss is a mechanism or cannot be solved accurately.</summary>
     /// <param name="record">Revision.</param>
     /// <param name="cache">Lines known so far.</param>
@@ -109,6 +112,7 @@ public static class StructurePreparation
 
             RequireEverything();
             RequireRatedEffects();
+            RequireDeckOverBearings();
             var planes = unit.Planes.Length == 2 ? unit.Planes : [new Plane("", 0), new Plane("", 1)];
             return new RatedUnit(
                 unit.UnitId,
@@ -177,6 +181,19 @@ public static class StructurePreparation
                         Require(new TrussQuantity(EffectKind.HorizontalReaction, s), plane.PlaneId, $"horizontal reaction of {truss.Supports[s].Name}");
                     }
                 }
+            }
+        }
+
+        /// <summary>Short of a bearing there is nothing to drive on: a panel point is missing, and with it the load of the end panel.</summary>
+        private void RequireDeckOverBearings()
+        {
+            var held = HeldX();
+            if (held.Count > 0 && (truss.DeckStartM > held[0] + DeckRoundingM || truss.DeckEndM < held[^1] - DeckRoundingM))
+            {
+                _gaps.Add(new Reason(
+                    ReasonCode.DataMissing,
+                    FormattableString.Invariant($"The deck reaches from {truss.DeckStartM:0.###} m to {truss.DeckEndM:0.###} m, the bearings from {held[0]:0.###} m to {held[^1]:0.###} m; give the panel points or seats up to the outer bearings."),
+                    $"{unit.Path}.truss.deck"));
             }
         }
 

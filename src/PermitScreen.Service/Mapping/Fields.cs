@@ -35,7 +35,7 @@ internal static class Fields
             return value;
         }
 
-        faults.Add(field, $"Found {Text(value)}; allowed is {allowed.Words()}, {unit}.");
+        faults.Add(field, $"Found {Text(value)}; allowed is {allowed.Words(value)}, {unit}.");
         return null;
     }
 
@@ -44,7 +44,7 @@ internal static class Fields
     {
         if (!has)
         {
-            faults.Add(field, $"Missing; give {allowed.Words()}, {unit}.");
+            faults.Add(field, $"Missing; give {allowed.Words(0)}, {unit}.");
             return double.NaN;
         }
 

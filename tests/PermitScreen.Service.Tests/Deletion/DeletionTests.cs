@@ -35,14 +35,14 @@ public sealed class DeletionTests(DeletionCounts counts) : IClassFixture<Deletio
     }
 
     [Theory]
-    [InlineData("01-reactor-vessel-13-axles.json")]
-    [InlineData("02-transformer-19-axles.json")]
-    [InlineData("03-excavator-9-axles.json")]
-    [InlineData("04-timber-5-axles-annual.json")]
-    public void Nothing_deleted_from_a_demo_application_or_the_policy_makes_a_verdict_better(string file)
+    [InlineData("01-reactor-vessel-13-axles.json", false)]
+    [InlineData("02-transformer-19-axles.json", false)]
+    [InlineData("03-excavator-9-axles.json", true)]
+    [InlineData("04-timber-5-axles-annual.json", true)]
+    public void Nothing_deleted_from_a_demo_application_or_the_policy_makes_a_verdict_better(string file, bool ofPolicy)
     {
         var (application, structures, policy) = ContractFiles.Demo(file);
-        Judge("demo/" + file, new InProcess(application, structures, policy, ContractFiles.DemoDay), [], ofApplication: true, ofPolicy: true);
+        Judge("demo/" + file, new InProcess(application, structures, policy, ContractFiles.DemoDay), [], ofApplication: true, ofPolicy);
     }
 
     [Theory]

@@ -28,7 +28,7 @@ internal sealed class InProcess(Application application, IReadOnlyList<Structure
     public Contracts.V1.Policy Policy => policy;
 
     /// <summary>The result of the unchanged messages.</summary>
-    public RouteResult Screen() => Screen(Known().Application, Known().Policy, Known().Structures);
+    public RouteResult Screen(CancellationToken cancellation = default) => Screen(Known().Application, Known().Policy, Known().Structures, cancellation);
 
     /// <summary>The result with another application, or null where it is refused.</summary>
     public RouteResult? With(Application changed) => Map(changed) is { } record ? Screen(record, Known().Policy, Known().Structures) : null;
@@ -63,6 +63,7 @@ internal sealed class InProcess(Application application, IReadOnlyList<Structure
         return (_application, _policy, _structures);
     }
 
-    private RouteResult Screen(ApplicationRecord record, PolicyDocument document, ImmutableDictionary<string, PreparedStructure> prepared) =>
-        RouteScreening.Of(record, document, new CatalogueSnapshot(1, prepared.ToImmutableSortedDictionary(StringComparer.Ordinal)), asOf, CancellationToken.None);
+    private RouteResult Screen(
+        ApplicationRecord record, PolicyDocument document, ImmutableDictionary<string, PreparedStructure> prepared, CancellationToken cancellation = default) =>
+        RouteScreening.Of(record, document, new CatalogueSnapshot(1, prepared.ToImmutableSortedDictionary(StringComparer.Ordinal)), asOf, cancellation);
 }
