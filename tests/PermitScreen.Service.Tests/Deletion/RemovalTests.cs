@@ -6,7 +6,7 @@ using PermitScreen.Service.Tests.Support;
 namespace PermitScreen.Service.Tests.Deletion;
 
 /// <summary>
-/// Whole entries taken out of the lists of a truss unit that passes: an effect, a plane of an effect, a member, a support, a joint, an end panel
+/// Whole entries taken out of the lists of a truss unit that passes: an effect, a plane of an effect, a member, a support, a joint, a panel
 /// point, a plane. Everything is rated or said not to be (engineering rule D6), so what is left is refused or not passed.
 /// </summary>
 public sealed class RemovalTests
@@ -50,9 +50,9 @@ public sealed class RemovalTests
         {
             for (var i = 0; i < of(structure.Units[unit]).Count; i++)
             {
-                if (name == "panel_points" && !(deckEndsAtBearings && (i == 0 || i == of(structure.Units[unit]).Count - 1)))
+                if (name == "panel_points" && !deckEndsAtBearings && (i == 0 || i == of(structure.Units[unit]).Count - 1))
                 {
-                    // Without a floor beam in between or on an overhang, the stringers reach farther: another deck, and a possible one.
+                    // Without its last floor beam an overhang is another deck, and a possible one.
                     continue;
                 }
 
