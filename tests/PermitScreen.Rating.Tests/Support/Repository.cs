@@ -1,0 +1,13 @@
+using System.Reflection;
+
+namespace PermitScreen.Rating.Tests.Support;
+
+/// <summary>Paths in the checkout that the tests were built from.</summary>
+internal static class Repository
+{
+    private static string Root { get; } = typeof(Repository).Assembly
+        .GetCustomAttributes<AssemblyMetadataAttribute>()
+        .Single(a => a.Key == "RepositoryRoot").Value!;
+
+    public static string Path(params string[] parts) => System.IO.Path.Combine([Root, .. parts]);
+}
