@@ -1,5 +1,6 @@
 """A client in another language: stubs made from the protos by the distribution's protoc, python3-grpcio."""
 
+import math
 import threading
 import time
 
@@ -36,6 +37,22 @@ def same_question_same_answer(check, service, _):
     request = stubs.request(oracle.application(FIRST), POLICY, AS_OF)
     answers = {service.screening.ScreenApplication(request, timeout=60).SerializeToString(deterministic=True) for _ in range(3)}
     check.equal("python: the same question has the same answer to the byte", 1, len(answers))
+
+
+def a_common_factor_divides_rf(check, service, _):
+    """Where nobody else is on the structure, and the live-load factor does not depend on weight."""
+    def factors(times):
+        application = oracle.application(FIRST)
+        for axle in application["configurations"][0]["loading"]["axleTrains"][0]["axles"]:
+            axle["loadKn"] *= times
+        answer = stubs.as_json(service.screening.ScreenApplication(stubs.request(application, POLICY, AS_OF), timeout=60))["screening"]
+        return {(c["structure"], r["rungId"]): r["ratingFactor"] for c in answer["crossings"] for r in c["rungs"] if r["rungId"].startswith("alone") and "ratingFactor" in r}
+
+    plain = factors(1)
+    for times in (0.5, 1.25, 3):
+        scaled = factors(times)
+        misses = [f"{at}: {plain[at]} becomes {scaled.get(at)}" for at in plain if not math.isclose(scaled.get(at, 0) * times, plain[at], rel_tol=1e-12)]
+        check.none(f"python: axle loads times {times} divide the RF of {len(plain)} rungs by it within 1e-12", misses)
 
 
 def reads_what_was_refused(check, service, _):
@@ -160,7 +177,7 @@ def everything(check):
     port = free_port()
     with serving(port) as program, stubs.Service(port) as service:
         program.wait_until_ready()
-        check.all((screens_the_demo, same_question_same_answer, reads_what_was_refused, what_is_not_there, validates_only, pages, influence_lines,
+        check.all((screens_the_demo, same_question_same_answer, a_common_factor_divides_rf, reads_what_was_refused, what_is_not_there, validates_only, pages, influence_lines,
                    deadlines, cancels, too_large), service, program)
         check.that("python: the log has no internal error", "failed; error id" not in program.output, program.output)
 
