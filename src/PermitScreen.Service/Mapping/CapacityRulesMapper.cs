@@ -50,6 +50,11 @@ internal static class CapacityRulesMapper
         }
 
         var floor = faults.Required("factor_floor", rules.HasFactorFloor, rules.FactorFloor, Allowed.Fraction, "dimensionless");
+        if (!rules.HasConditionFactorOnMeasuredLoss)
+        {
+            faults.Add("condition_factor_on_measured_loss", "Missing; say whether the condition factor also applies where measured loss is already in the resistance.");
+        }
+
         return new CapacityRules(condition.ToImmutable(), system.ToImmutable(), floor, rules.ConditionFactorOnMeasuredLoss);
     }
 }

@@ -12,11 +12,9 @@ public sealed class DeletionCounts : IDisposable
 
     public int NotAssessed { get; set; }
 
-    public int Allowed { get; set; }
-
     public int Better { get; set; }
 
     public void Dispose() => Figures.Write("deletion", string.Create(
         CultureInfo.InvariantCulture,
-        $"{Deletions} deletions, {Refused} refused, {NotAssessed} not assessed, {Better} better ({Allowed} of a switch without presence, listed with the reason)"));
+        $"{Deletions} deletions, {Refused} refused, {NotAssessed} not assessed, {Better} better"));
 }

@@ -13,15 +13,6 @@ namespace PermitScreen.Service.Tests.Deletion;
 /// </summary>
 public sealed class DeletionTests(DeletionCounts counts) : IClassFixture<DeletionCounts>
 {
-    /// <summary>
-    /// Deletions that may improve, each with the reason why the mapper cannot tell the absence from a statement. Kept as short as it can be.
-    /// </summary>
-    private static readonly Dictionary<string, string> Allowed = new(StringComparer.Ordinal)
-    {
-        ["capacity_rules.condition_factor_on_measured_loss"] =
-            "A switch without presence: absent and \"no\" are the same bytes. \"No\" is the source's own rule (measured loss replaces the condition factor).",
-    };
-
     public static TheoryData<string> HandWorkedCases() =>
         [.. Directory.EnumerateDirectories(Repository.Path("tests", "hand-worked")).Select(d => Path.GetFileName(d)).Order(StringComparer.Ordinal)];
 
@@ -148,15 +139,8 @@ public sealed class DeletionTests(DeletionCounts counts) : IClassFixture<Deletio
                 }
                 else if (Betterment.Of(before, after) is { } better)
                 {
-                    if (Allowed.ContainsKey(field.Kind))
-                    {
-                        counts.Allowed++;
-                    }
-                    else
-                    {
-                        counts.Better++;
-                        Better.Add($"{what} {field.Path}: {better}");
-                    }
+                    counts.Better++;
+                    Better.Add($"{what} {field.Path}: {better}");
                 }
                 else if (after.Crossings.Zip(before.Crossings).Any(c => c.First.Verdict == Verdict.NotAssessed && c.Second.Verdict != Verdict.NotAssessed))
                 {
