@@ -1,4 +1,3 @@
-using System.Reflection;
 using System.Xml.Linq;
 
 namespace PermitScreen.Architecture.Tests;
@@ -6,9 +5,7 @@ namespace PermitScreen.Architecture.Tests;
 /// <summary>Project files: a reference that nothing uses yet leaves no trace in an assembly, but is wrong all the same.</summary>
 public sealed class ProjectFileTests
 {
-    private static readonly string Source = Path.Combine(
-        typeof(ProjectFileTests).Assembly.GetCustomAttributes<AssemblyMetadataAttribute>().Single(a => a.Key == "RepositoryRoot").Value!,
-        "src");
+    private static readonly string Source = Repository.Path("src");
 
     public static TheoryData<string> Projects() => [.. Layers.ProjectReferences.Keys];
 

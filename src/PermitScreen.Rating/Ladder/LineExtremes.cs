@@ -21,14 +21,22 @@ public sealed class LineExtremes(bool plain = false)
         var key = new Key(line, train, sense, directions, rule);
         if (!_known.TryGetValue(key, out var extreme))
         {
-            extreme = plain
-                ? PlainExtremes.Of(line, train, sense, directions, rule)
-                : SweepExtremes.Of(line, train, sense, directions, rule);
+            extreme = Find(line, train, sense, directions, rule);
             _known.Add(key, extreme);
         }
 
         return extreme;
     }
+
+    /// <summary>The same, not kept: for a train that nothing else asks for.</summary>
+    /// <param name="line">Influence line.</param>
+    /// <param name="train">Train.</param>
+    /// <param name="sense">Which end of the range.</param>
+    /// <param name="directions">Directions of travel.</param>
+    /// <param name="rule">How axle weights are trusted.</param>
+    public Extreme Find(InfluenceLine line, AxleTrain train, Sense sense, TravelDirections directions, WeighingRule rule) => plain
+        ? PlainExtremes.Of(line, train, sense, directions, rule)
+        : SweepExtremes.Of(line, train, sense, directions, rule);
 
     private readonly struct Key(InfluenceLine line, AxleTrain train, Sense sense, TravelDirections directions, WeighingRule rule) : IEquatable<Key>
     {

@@ -58,7 +58,7 @@ public static class VehicleOnPlane
                 weights[i] = vehicle.Train.LoadsKn[i] * (share + side * slope * vehicle.LateralOffsetsM[i]);
             }
 
-            var found = extremes.Of(effect.Line, vehicle.Train.WithLoads(weights), sense.Extreme(), flag, rule);
+            var found = extremes.Find(effect.Line, vehicle.Train.WithLoads(weights), sense.Extreme(), flag, rule);
             if (worst is not { } known || Math.Abs(found.Value) > Math.Abs(known.Value))
             {
                 worst = found;

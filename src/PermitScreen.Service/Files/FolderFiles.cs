@@ -31,5 +31,5 @@ public static class FolderFiles
     /// <param name="schema">Schema of the kind.</param>
     /// <exception cref="FileNotFoundException">There is neither.</exception>
     public static IEnumerable<string> Of(string path, string schema) =>
-        Of(path).Where(file => file == path || !FileSchemas.Kinds.ContainsKey(ContractFile.SchemaOf(File.ReadAllText(file))) || ContractFile.SchemaOf(File.ReadAllText(file)) == schema);
+        Of(path).Where(file => file == path || ContractFile.SchemaOf(File.ReadAllText(file)) is var found && (found == schema || !FileSchemas.Kinds.ContainsKey(found)));
 }

@@ -23,6 +23,9 @@ internal static class Limits
     /// <summary>Farthest chainage or length, m.</summary>
     public const double ChainageM = 100_000;
 
+    /// <summary>Longest vehicle, m.</summary>
+    public const double VehicleM = 1_000;
+
     /// <summary>Farthest lateral position or height, m.</summary>
     public const double LateralM = 1_000;
 

@@ -98,7 +98,7 @@ internal static class VehicleMapper
         switch (axle.PlaceCase)
         {
             case C.Axle.PlaceOneofCase.OffsetM:
-                var offset = faults.Required("offset_m", has: true, axle.OffsetM, Limits.LateralM);
+                var offset = faults.Required("offset_m", has: true, axle.OffsetM, Limits.VehicleM);
                 if (index == 0 && offset != 0)
                 {
                     faults.Add("offset_m", $"Found {Fields.Text(axle.OffsetM)}; the lead axle has offset 0.");
@@ -110,7 +110,7 @@ internal static class VehicleMapper
 
                 return offset;
             case C.Axle.PlaceOneofCase.GapM:
-                var gap = faults.Required("gap_m", has: true, axle.GapM, Limits.LateralM);
+                var gap = faults.Required("gap_m", has: true, axle.GapM, Limits.VehicleM);
                 if (gap < 0)
                 {
                     faults.Add("gap_m", $"Found {Fields.Text(axle.GapM)}; allowed is a number of 0 or more, m.");

@@ -1,6 +1,5 @@
 using System.Globalization;
 using System.Text.Json.Nodes;
-using PermitScreen.Rating.Tests.Support;
 
 namespace PermitScreen.Rating.Tests.Policies;
 
@@ -19,7 +18,7 @@ public sealed class PolicyFileTests
     public void Live_load_factors_are_those_of_the_table(string file)
     {
         var rows = Policy(file)["liveLoadRows"]!.AsArray();
-        var expected = ReferenceTable.Read("mbe_permit_load_factors.csv").Where(r => r["edition"] == "2013 interim and later").ToList();
+        var expected = ReferenceTable.Read("mbe_permit_load_factors.csv").Rows.Where(r => r["edition"] == "2013 interim and later").ToList();
         foreach (var reference in expected)
         {
             var mixed = reference["loading_condition"] == "mix with traffic";
@@ -107,7 +106,7 @@ public sealed class PolicyFileTests
     public void The_vehicle_beside_is_Type_3_3_with_its_factor(string file)
     {
         var other = Policy(file)["otherLaneLoad"]!;
-        var reference = ReferenceTable.Read("vehicles_us.csv").Single(v => v["vehicle"] == "Type 3-3");
+        var reference = ReferenceTable.Read("vehicles_us.csv").Rows.Single(v => v["vehicle"] == "Type 3-3");
         var axles = other["vehicle"]!["axles"]!.AsArray();
         Assert.Equal(reference["axle_loads_kn"].Split(' ').Select(Number), axles.Select(a => (double)a!["loadKn"]!));
         var spacing = 0.0;
@@ -133,9 +132,9 @@ public sealed class PolicyFileTests
     private static JsonNode Policy(string file) => JsonNode.Parse(File.ReadAllText(Repository.Path(file.Split('/'))))!["policy"]!;
 
     private static double Reference(string group, string item) =>
-        Number(ReferenceTable.Read("rating_factors.csv").Single(r => r["group"] == group && r["item"] == item)["value"]);
+        Number(ReferenceTable.Read("rating_factors.csv").Rows.Single(r => r["group"] == group && r["item"] == item)["value"]);
 
-    private static string Kind(IReadOnlyDictionary<string, string> row) => (row["permit_type"], row["frequency"]) switch
+    private static string Kind(ReferenceTable.Row row) => (row["permit_type"], row["frequency"]) switch
     {
         ("routine or annual", _) => "PERMIT_KIND_ROUTINE",
         (_, "single trip") => "PERMIT_KIND_SPECIAL_SINGLE_TRIP",

@@ -1,6 +1,5 @@
 using PermitScreen.Mechanics.Faults;
 using PermitScreen.Service.Files;
-using PermitScreen.Service.Tests.Support;
 
 namespace PermitScreen.Service.Tests.BadInput;
 

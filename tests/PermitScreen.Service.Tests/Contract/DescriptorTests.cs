@@ -1,6 +1,5 @@
 using System.Text.RegularExpressions;
 using Google.Protobuf.Reflection;
-using PermitScreen.Service.Tests.Support;
 
 namespace PermitScreen.Service.Tests.Contract;
 
@@ -61,7 +60,7 @@ public sealed partial class DescriptorTests
             .Concat(ContractDescriptors.Services.SelectMany(s => s.Methods).Select(m => m.FullName))
             .ToList();
         var without = names.Where(n => string.IsNullOrWhiteSpace(ProtoComments.Of(n))).ToList();
-        Figures.Write("contract", FormattableString.Invariant($"{names.Count} declarations, {without.Count} without a comment"));
+        Figures.Note("contract", FormattableString.Invariant($"{names.Count} declarations, {without.Count} without a comment"));
         Assert.True(names.Count > 100, "The contract was not found.");
         Assert.Empty(without);
     }

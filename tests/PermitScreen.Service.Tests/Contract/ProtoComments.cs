@@ -1,5 +1,4 @@
 using System.Text.RegularExpressions;
-using PermitScreen.Service.Tests.Support;
 
 namespace PermitScreen.Service.Tests.Contract;
 

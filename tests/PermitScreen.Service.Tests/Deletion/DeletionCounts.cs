@@ -1,5 +1,4 @@
 using System.Globalization;
-using PermitScreen.Service.Tests.Support;
 
 namespace PermitScreen.Service.Tests.Deletion;
 
@@ -14,7 +13,7 @@ public sealed class DeletionCounts : IDisposable
 
     public int Better { get; set; }
 
-    public void Dispose() => Figures.Write("deletion", string.Create(
+    public void Dispose() => Figures.Note("deletion", string.Create(
         CultureInfo.InvariantCulture,
         $"{Deletions} deletions, {Refused} refused, {NotAssessed} not assessed, {Better} better"));
 }

@@ -41,7 +41,7 @@ public sealed class HandWorkedTests
             }
         }
 
-        Figures.Write("hand-worked/" + name, string.Create(CultureInfo.InvariantCulture, $"{checks.Count} checks, {misses.Count} misses, worst {worst:0.0e+0}"));
+        Figures.Note("hand-worked/" + name, string.Create(CultureInfo.InvariantCulture, $"{checks.Count} checks, {misses.Count} misses, worst {worst:0.0e+0}"));
         Assert.True(checks.Count > 0, "The case has no checks.");
         Assert.True(misses.Count == 0, $"{misses.Count} of {checks.Count} differ:\n" + string.Join('\n', misses.Take(20)));
     }

@@ -1,7 +1,7 @@
 using System.Globalization;
 using System.Text;
 
-namespace PermitScreen.Mechanics.Tests.Support;
+namespace PermitScreen.Tests.Shared;
 
 /// <summary>Hands out what checks measured (worst difference, number of cases), one line "key, tab, value" each, to the file named by PERMITSCREEN_FIGURES.</summary>
 internal static class Figures

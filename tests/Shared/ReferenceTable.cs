@@ -1,7 +1,7 @@
 using System.Globalization;
 using System.Text;
 
-namespace PermitScreen.Mechanics.Tests.Support;
+namespace PermitScreen.Tests.Shared;
 
 /// <summary>A table under tests/reference: comma separated, first row names, quotes around cells with commas.</summary>
 internal sealed class ReferenceTable
@@ -18,7 +18,7 @@ internal sealed class ReferenceTable
 
     internal static ReferenceTable Read(string file)
     {
-        var lines = File.ReadAllLines(Repository.Reference(file)).Where(line => line.Length > 0).Select(Split).ToArray();
+        var lines = File.ReadAllLines(Repository.Path("tests", "reference", file)).Where(line => line.Length > 0).Select(Split).ToArray();
         return new ReferenceTable(lines[0], lines[1..]);
     }
 
@@ -50,6 +50,8 @@ internal sealed class ReferenceTable
 
     internal sealed class Row(ReferenceTable table, string[] cells)
     {
+        internal string this[string column] => Text(column);
+
         internal string Text(string column) => cells[table._columns[column]];
 
         internal bool Has(string column) => Text(column).Length > 0;

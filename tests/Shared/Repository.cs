@@ -1,9 +1,9 @@
 using System.Reflection;
 
-namespace PermitScreen.Service.Tests.Support;
+namespace PermitScreen.Tests.Shared;
 
 /// <summary>Paths in the checkout that the tests were built from.</summary>
-public static class Repository
+internal static class Repository
 {
     public static string Root { get; } = typeof(Repository).Assembly
         .GetCustomAttributes<AssemblyMetadataAttribute>()
