@@ -1,6 +1,7 @@
 using System.CommandLine;
 using System.Text;
 using Grpc.Core;
+using PermitScreen.Catalogue.Storage;
 using PermitScreen.Cli;
 using PermitScreen.Cli.Commands;
 using PermitScreen.Cli.Printing;
@@ -15,6 +16,19 @@ var root = new RootCommand("PermitScreen: screens overweight vehicles against th
     CheckCommand.Create(),
     ListCommand.Create(),
     ShowCommand.Create(),
+    ImportCommand.Create(),
+    ExportCommand.Create(),
+    RemoveCommand.Create(),
+    PolicyCommand.Create(),
+    HistoryCommand.Create(),
+    CompareCommand.Create(),
+    ChangesCommand.Create(),
+    AuditCommand.Create(),
+    VerifyCommand.Create(),
+    BacklogCommand.Create(),
+    CollectCommand.Create(),
+    BackupCommand.Create(),
+    RestoreCommand.Create(),
     ServeCommand.Create(),
 };
 var parsed = root.Parse(args);
@@ -48,6 +62,11 @@ catch (FileFaultsException error)
 {
     await Console.Error.WriteLineAsync(error.Message);
     return ExitCodes.BadInput;
+}
+catch (StoreException error)
+{
+    await Console.Error.WriteLineAsync(error.Message);
+    return error.Trouble is StoreTrouble.Locked or StoreTrouble.NewerSchema or StoreTrouble.NotAllowed or StoreTrouble.Damaged ? ExitCodes.BadInput : ExitCodes.NoAnswer;
 }
 catch (Exception error) when (error is IOException or UnauthorizedAccessException)
 {

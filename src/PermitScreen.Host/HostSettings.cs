@@ -6,8 +6,11 @@ namespace PermitScreen.Host;
 /// <summary>What one process of the service is started with.</summary>
 public sealed record HostSettings
 {
-    /// <summary>Where the catalogue and the policies are.</summary>
-    public required CatalogueSource Source { get; init; }
+    /// <summary>Folder of the records, made where it does not exist; null for a temporary one that is removed at the end.</summary>
+    public string? DataFolder { get; init; }
+
+    /// <summary>Files that are taken into fresh records when the service starts; none where the records have a folder of their own.</summary>
+    public CatalogueSource Source { get; init; } = CatalogueSource.None;
 
     /// <summary>Address to listen on; the loopback address by default: anything wider needs a proxy with TLS before it.</summary>
     public IPAddress Address { get; init; } = IPAddress.Loopback;

@@ -22,9 +22,10 @@ public static class ServiceHost
     /// <param name="settings">Settings.</param>
     /// <exception cref="Service.Files.FileFaultsException">A policy is at fault.</exception>
     /// <exception cref="FileNotFoundException">A path does not exist.</exception>
+    /// <exception cref="Catalogue.Storage.StoreException">The records cannot be opened; the message says why and how to mend it.</exception>
     public static WebApplication Build(HostSettings settings)
     {
-        var policies = PolicyLoader.Load(settings.Source.PolicyPaths);
+        var source = settings.Source.WithPoliciesRead();
         var builder = WebApplication.CreateSlimBuilder();
         builder.Logging.ClearProviders();
         builder.Logging.AddSimpleConsole(o =>
@@ -38,7 +39,7 @@ public static class ServiceHost
         if (settings.Quiet)
         {
             // Why a start failed is told by the command itself, once.
-            builder.Logging.AddFilter(typeof(CatalogueWorker).FullName, LogLevel.None);
+            builder.Logging.AddFilter(typeof(CatalogueSource).Namespace, LogLevel.None);
             builder.Logging.AddFilter("Microsoft.Extensions.Hosting", LogLevel.None);
         }
 
@@ -49,7 +50,8 @@ public static class ServiceHost
         builder.Logging.AddFilter("Microsoft.Extensions.Diagnostics.HealthChecks", LogLevel.None);
         builder.Services.Configure<HostOptions>(o => o.ShutdownTimeout = TimeToStop);
         builder.WebHost.ConfigureKestrel(o => o.Listen(settings.Address, settings.Port, l => l.Protocols = HttpProtocols.Http2));
-        builder.Services.AddPermitScreen(settings.Source, policies, settings.Zone);
+        var place = RecordsFolder.Register(builder.Services, RecordsFolder.Open(settings), settings);
+        builder.Services.AddPermitScreen(place, source, settings.Zone);
         var app = builder.Build();
         app.MapPermitScreen();
         return app;

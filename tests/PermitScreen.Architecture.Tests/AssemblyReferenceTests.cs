@@ -3,7 +3,7 @@ namespace PermitScreen.Architecture.Tests;
 /// <summary>References of the built assemblies, as the compiler wrote them.</summary>
 public sealed class AssemblyReferenceTests
 {
-    private static readonly string[] OutsidePure = ["Google.", "Grpc.", "Microsoft.AspNetCore", "Microsoft.Extensions", "Microsoft.EntityFrameworkCore", "System.Net.Http", "System.Data"];
+    private static readonly string[] OutsidePure = ["Google.", "Grpc.", "Microsoft.AspNetCore", "Microsoft.Extensions", "Microsoft.Data", "SQLitePCL", "System.Net.Http", "System.Data"];
 
     public static TheoryData<string> Projects() => [.. Layers.ProjectReferences.Keys];
 
@@ -31,6 +31,11 @@ public sealed class AssemblyReferenceTests
     [MemberData(nameof(Projects))]
     public void The_contract_is_known_at_the_edge_only(string project) =>
         Assert.True(!References(project).Contains("PermitScreen.Contracts") || project is "PermitScreen.Service" or "PermitScreen.Host" or "PermitScreen.Cli");
+
+    [Theory]
+    [MemberData(nameof(Projects))]
+    public void The_database_is_known_to_its_own_project_only(string project) =>
+        Assert.Equal(project == "PermitScreen.Data.Sqlite", References(project).Any(n => n.StartsWith("Microsoft.Data.Sqlite", StringComparison.Ordinal)));
 
     [Fact]
     public void The_layers_do_use_each_other()

@@ -14,7 +14,8 @@ internal static class Layers
         ["PermitScreen.Screening"] = ["PermitScreen.Catalogue"],
         ["PermitScreen.Contracts"] = [],
         ["PermitScreen.Service"] = ["PermitScreen.Contracts", "PermitScreen.Screening"],
-        ["PermitScreen.Host"] = ["PermitScreen.Service"],
+        ["PermitScreen.Data.Sqlite"] = ["PermitScreen.Catalogue"],
+        ["PermitScreen.Host"] = ["PermitScreen.Data.Sqlite", "PermitScreen.Service"],
         ["PermitScreen.Cli"] = ["PermitScreen.Contracts", "PermitScreen.Host"],
     };
 

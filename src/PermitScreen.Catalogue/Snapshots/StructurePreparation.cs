@@ -17,9 +17,9 @@ public static class StructurePreparation
 
     /// <summary>Prepares a revision; null with faults where a truss is a mechanism or cannot be solved accurately.</summary>
     /// <param name="record">Revision.</param>
-    /// <param name="cache">Lines known so far.</param>
+    /// <param name="source">Gives the lines.</param>
     /// <param name="faults">Takes what is wrong.</param>
-    public static PreparedStructure? Prepare(StructureRecord record, LineCache cache, FaultList faults)
+    public static PreparedStructure? Prepare(StructureRecord record, ILineSource source, FaultList faults)
     {
         var before = faults.Count;
         var units = ImmutableArray.CreateBuilder<RatedUnit>();
@@ -36,7 +36,7 @@ public static class StructurePreparation
                 continue;
             }
 
-            if (cache.GetOrSolve(truss, faults.At("units", u).Under("truss")) is not { } lines)
+            if (source.GetOrSolve(truss, faults.At("units", u).Under("truss")) is not { } lines)
             {
                 continue;
             }

@@ -29,7 +29,7 @@ internal static class CheckCommand
                 throw new BadInputException("There is no JSON file in what was named.");
             }
 
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: false, cancellation);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation, needsCatalogue: false);
             var findings = new Findings(parsed.GetValue(json));
             foreach (var file in files)
             {

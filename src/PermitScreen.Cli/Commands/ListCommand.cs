@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.Globalization;
 using Google.Protobuf;
 using PermitScreen.Cli.Connection;
 using PermitScreen.Cli.Printing;
@@ -12,58 +13,66 @@ internal static class ListCommand
 {
     public static Command Create()
     {
-        var json = new Option<bool>("--json") { Description = "One JSON object a line, for scripts." };
+        var asOfVersion = VersionOptions.AsOf();
+        var json = new Option<bool>("--json") { Description = "One JSON object a line, for scripts: structures, without geometry and effects." };
         var service = new ServiceOptions();
-        var command = new Command("list", "List the structures of the catalogue and the policies.") { json };
+        var command = new Command("list", "List the structures of the catalogue and the policy documents.") { asOfVersion, json };
         service.AddTo(command);
         command.SetAction(async (parsed, cancellation) =>
         {
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: true, cancellation);
-            var structures = await StructuresAsync(connection, cancellation);
-            var policies = await connection.Policies.ListPoliciesAsync(new ListPoliciesRequest(), connection.Call(cancellation));
+            var version = VersionOptions.Checked(asOfVersion, parsed);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            var pages = Listings.StructuresAsync(connection, StructureView.Basic, Listings.LargestPage, version, cancellation);
             if (parsed.GetValue(json))
             {
-                foreach (var structure in structures)
+                await foreach (var page in pages)
                 {
-                    Console.Out.WriteLine(JsonFormatter.Default.Format(structure));
+                    foreach (var structure in page.Structures)
+                    {
+                        Console.Out.WriteLine(JsonFormatter.Default.Format(structure));
+                    }
                 }
 
                 return ExitCodes.Passed;
             }
 
             var console = Consoles.Create();
-            var table = new Table().Border(TableBorder.Simple);
-            table.AddColumns("Structure", "Title", "State", "Units", "Etag");
-            foreach (var s in structures)
+            var (count, listed) = (0, version ?? 0);
+            await foreach (var page in pages)
             {
-                table.AddRow(new Text(s.Name), new Text(s.Title), new Text(s.State.ToString()), new Text(string.Join(", ", s.Units.Select(u => u.UnitId))), new Text(s.Etag));
+                // A table a page: a catalogue of any size is printed as it comes.
+                console.Write(TableOf(page.Structures));
+                (count, listed) = (count + page.Structures.Count, page.CatalogueVersion);
             }
 
-            console.Write(table);
-            var shelf = new Table().Border(TableBorder.Simple);
-            shelf.AddColumns("Policy", "Title", "State", "Confirmed by");
-            foreach (var p in policies.Policies)
-            {
-                shelf.AddRow(new Text(p.Name), new Text(p.Title), new Text(p.State.ToString()), new Text(p.Confirmation?.Person ?? "nobody"));
-            }
-
-            console.Write(shelf);
+            var policies = await Listings.PoliciesAsync(connection, listed > 0 ? listed : null, cancellation);
+            console.Write(TableOf(policies));
+            console.WriteLine(FormattableString.Invariant($"{Numbers.Counted(count, "structure", "structures")} and {Numbers.Counted(policies.Count, "policy document", "policy documents")} of catalogue version {listed}"));
             return ExitCodes.Passed;
         });
         return command;
     }
 
-    private static async Task<IReadOnlyList<Structure>> StructuresAsync(ServiceConnection connection, CancellationToken cancellation)
+    private static Table TableOf(IEnumerable<Structure> structures)
     {
-        var all = new List<Structure>();
-        var token = "";
-        do
+        var table = Tables.Create("Structure", "Title", "State", "Units", ">From version", "Etag");
+        foreach (var s in structures)
         {
-            var page = await connection.Catalogue.ListStructuresAsync(new ListStructuresRequest { PageSize = 50, PageToken = token }, connection.Call(cancellation));
-            all.AddRange(page.Structures);
-            token = page.NextPageToken;
+            table.AddTexts(s.Name, s.Title, Numbers.Words(s.State), string.Join(", ", s.Units.Select(u => u.UnitId)), s.CatalogueVersion.ToString(CultureInfo.InvariantCulture), s.Etag);
         }
-        while (token.Length > 0);
-        return all;
+
+        return table;
+    }
+
+    private static Table TableOf(IEnumerable<Policy> policies)
+    {
+        var table = Tables.Create("Policy", "Title", "State", "In force", "Confirmed by", ">From version", "Etag");
+        foreach (var p in policies)
+        {
+            table.AddTexts(
+                ResourceNames.Of(p), p.Title, Numbers.Words(p.State), PolicyWords.InForce(p), p.Confirmation?.Person ?? "nobody", p.CatalogueVersion.ToString(CultureInfo.InvariantCulture), p.Etag);
+        }
+
+        return table;
     }
 }

@@ -23,7 +23,7 @@ internal static class ScreenCommand
         {
             var application = ApplicationInput.Read(parsed.GetValue(file)!);
             var date = ApplicationInput.Date(parsed.GetValue(asOf));
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: true, cancellation);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
             var name = parsed.GetValue(policy) ?? await OnlyPolicyAsync(connection, cancellation);
             var full = parsed.GetValue(json) || parsed.GetValue(arithmetic);
             var screening = await RunAsync(connection, application, name, date, full, cancellation);
@@ -61,9 +61,13 @@ internal static class ScreenCommand
 
     private static async Task<string> OnlyPolicyAsync(ServiceConnection connection, CancellationToken cancellation)
     {
-        var policies = await connection.Policies.ListPoliciesAsync(new ListPoliciesRequest(), connection.Call(cancellation));
-        return policies.Policies.Count == 1
-            ? policies.Policies[0].Name
-            : throw new BadInputException($"Name the policy with --policy; the service has {string.Join(", ", policies.Policies.Select(p => p.Name))}.");
+        var documents = await Listings.PoliciesAsync(connection, null, cancellation);
+        var names = documents.Select(ResourceNames.PolicyOf).Distinct().ToList();
+        return names.Count switch
+        {
+            1 => names[0],
+            0 => throw new BadInputException("There is no policy to screen under; add one with `policy add` or `import`."),
+            _ => throw new BadInputException($"Name the policy with --policy; the service has {string.Join(", ", names)}."),
+        };
     }
 }

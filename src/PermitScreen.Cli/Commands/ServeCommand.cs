@@ -15,17 +15,19 @@ internal static class ServeCommand
 
     public static Command Create()
     {
-        var catalogue = new Option<string[]>("--catalogue") { Description = "Files or folders of structures.", AllowMultipleArgumentsPerToken = true, Required = true };
-        var policies = new Option<string[]>("--policies") { Description = "Files or folders of policies.", AllowMultipleArgumentsPerToken = true, Required = true };
+        var data = new Option<string?>("--data") { Description = "Folder of records, made where it does not exist; fill it with `import`." };
+        var catalogue = new Option<string[]>("--catalogue") { Description = "Files or folders of structures, kept while the service runs.", AllowMultipleArgumentsPerToken = true };
+        var policies = new Option<string[]>("--policies") { Description = "Files or folders of policies, kept while the service runs.", AllowMultipleArgumentsPerToken = true };
         var address = new Option<string>("--address") { Description = "Address to listen on. Anything but the loopback address needs a proxy with TLS and sign-on before it.", DefaultValueFactory = _ => "127.0.0.1" };
         var port = new Option<int>("--port") { Description = "Port for gRPC (HTTP/2 without TLS).", DefaultValueFactory = _ => DefaultPort };
         var zone = new Option<string>("--zone") { Description = "The authority's time zone, for instance Europe/Lisbon; its civil date is the as-of date where a caller states none.", DefaultValueFactory = _ => "UTC" };
-        var command = new Command("serve", "Run the service on a catalogue and policies read from files.") { catalogue, policies, address, port, zone };
+        var command = new Command("serve", "Run the service on the records in a folder, or on a catalogue and policies read from files.") { data, catalogue, policies, address, port, zone };
         command.SetAction(async (parsed, cancellation) =>
         {
             var settings = new HostSettings
             {
-                Source = new CatalogueSource(parsed.GetValue(catalogue)!, parsed.GetValue(policies)!),
+                Source = SourceOf(parsed.GetValue(data), parsed.GetValue(catalogue) ?? [], parsed.GetValue(policies) ?? []),
+                DataFolder = parsed.GetValue(data) is { } folder ? Folders.Checked("--data", folder) : null,
                 Address = IPAddress.TryParse(parsed.GetValue(address), out var ip) ? ip : throw new BadInputException($"--address is an IP address; found \"{parsed.GetValue(address)}\"."),
                 Port = Ports.Checked(parsed.GetValue(port)),
                 Zone = TimeZoneInfo.TryFindSystemTimeZoneById(parsed.GetValue(zone)!, out var found) ? found : throw new BadInputException($"There is no time zone \"{parsed.GetValue(zone)}\"; give a name such as Europe/Lisbon."),
@@ -51,4 +53,14 @@ internal static class ServeCommand
         });
         return command;
     }
+
+    private static CatalogueSource SourceOf(string? data, string[] catalogue, string[] policies) => (data, catalogue.Length, policies.Length) switch
+    {
+        (not null, 0, 0) => CatalogueSource.None,
+        (not null, _, _) => throw new BadInputException("--data names a folder of records, which come in by `import`; leave out --catalogue and --policies."),
+        (null, 0, 0) => throw new BadInputException("Say what to serve: --data FOLDER for the records in a folder, or --catalogue and --policies for files."),
+        (null, > 0, 0) => throw new BadInputException("Name the policies too, for instance --policies deploy/policies."),
+        (null, 0, > 0) => throw new BadInputException("Name the catalogue too, for instance --catalogue deploy/demo/catalogue."),
+        _ => new CatalogueSource(catalogue, policies),
+    };
 }

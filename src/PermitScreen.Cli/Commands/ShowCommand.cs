@@ -18,17 +18,24 @@ internal static class ShowCommand
     {
         var name = new Argument<string>("structure") { Description = "Resource name or agency number, for instance structures/P14-0032 or P14-0032." };
         var effect = new Option<string>("--effect") { Description = "Only the line of this effect, with its ordinates.", DefaultValueFactory = _ => "" };
+        var asOfVersion = VersionOptions.AsOf();
         var json = new Option<bool>("--json") { Description = "Print structure and lines as JSON, for scripts." };
         var service = new ServiceOptions();
-        var command = new Command("show", "Show a structure and its influence lines.") { name, effect, json };
+        var command = new Command("show", "Show a structure and its influence lines.") { name, effect, asOfVersion, json };
         service.AddTo(command);
         command.SetAction(async (parsed, cancellation) =>
         {
-            var resource = parsed.GetValue(name)!;
-            resource = resource.Contains('/', StringComparison.Ordinal) ? resource : "structures/" + resource;
-            await using var connection = await ServiceConnection.OpenAsync(service, parsed, needsCatalogue: true, cancellation);
-            var structure = (await connection.Catalogue.GetStructureAsync(new GetStructureRequest { Name = resource }, connection.Call(cancellation))).Structure;
-            var lines = await LinesAsync(connection, resource, parsed.GetValue(effect)!, cancellation);
+            var resource = ResourceNames.Structure(parsed.GetValue(name)!);
+            var version = VersionOptions.Checked(asOfVersion, parsed);
+            await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            var request = new GetStructureRequest { Name = resource };
+            if (version is { } asOf)
+            {
+                request.AsOfVersion = asOf;
+            }
+
+            var structure = (await connection.Catalogue.GetStructureAsync(request, connection.Call(cancellation))).Structure;
+            var lines = await LinesAsync(connection, resource, parsed.GetValue(effect)!, version, cancellation);
             if (parsed.GetValue(json))
             {
                 Console.Out.WriteLine($"{{ \"structure\": {JsonFormatter.Default.Format(structure)}, \"lines\": [{string.Join(",\n", lines.Select(l => JsonFormatter.Default.Format(l)))}] }}");
@@ -41,25 +48,29 @@ internal static class ShowCommand
         return command;
     }
 
-    private static async Task<IReadOnlyList<InfluenceLine>> LinesAsync(ServiceConnection connection, string resource, string effect, CancellationToken cancellation)
+    private static async Task<IReadOnlyList<InfluenceLine>> LinesAsync(ServiceConnection connection, string resource, string effect, long? asOfVersion, CancellationToken cancellation)
     {
         var all = new List<InfluenceLine>();
-        var token = "";
+        var request = new ListInfluenceLinesRequest { Parent = resource, EffectId = effect, PageSize = Listings.LargestPage };
+        if (asOfVersion is { } version)
+        {
+            request.AsOfVersion = version;
+        }
+
         do
         {
-            var request = new ListInfluenceLinesRequest { Parent = resource, EffectId = effect, PageSize = 1000, PageToken = token };
             var page = await connection.Catalogue.ListInfluenceLinesAsync(request, connection.Call(cancellation));
             all.AddRange(page.InfluenceLines);
-            token = page.NextPageToken;
+            request.PageToken = page.NextPageToken;
         }
-        while (token.Length > 0);
+        while (request.PageToken.Length > 0);
         return all;
     }
 
     private static void Print(Structure structure, IReadOnlyList<InfluenceLine> lines, bool ordinates)
     {
         var console = Consoles.Create();
-        console.WriteLine($"{structure.Name} {structure.Title}, owner {structure.Owner}, state {structure.State}, etag {structure.Etag}");
+        console.WriteLine(FormattableString.Invariant($"{structure.Name} {structure.Title}, owner {structure.Owner}, state {Numbers.Words(structure.State)}, from catalogue version {structure.CatalogueVersion}, etag {structure.Etag}"));
         if (structure.Roadway is { } roadway)
         {
             console.WriteLine(string.Create(CultureInfo.InvariantCulture, $"Roadway {roadway.LeftKerbM:0.###} to {roadway.RightKerbM:0.###} m, {roadway.LaneCount} lanes"));

@@ -1,11 +1,6 @@
 using System.CommandLine;
-using System.Net.Sockets;
 using Grpc.Core;
 using Grpc.Net.Client;
-using Microsoft.AspNetCore.Builder;
-using Microsoft.Extensions.DependencyInjection;
-using Microsoft.Extensions.Hosting;
-using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Contracts.V1;
 using PermitScreen.Host;
 using PermitScreen.Service.Workers;
@@ -16,19 +11,24 @@ namespace PermitScreen.Cli.Connection;
 internal sealed class ServiceConnection : IAsyncDisposable
 {
     private const int LargestMessageBytes = 256 * 1024 * 1024;
-    private readonly WebApplication? _own;
+    private readonly OwnService? _own;
     private readonly GrpcChannel _channel;
-    private readonly TimeSpan _timeout;
 
-    private ServiceConnection(WebApplication? own, Uri address, TimeSpan timeout)
+    private ServiceConnection(OwnService? own, Uri address, TimeSpan timeout)
     {
         _own = own;
-        _timeout = timeout;
+        Patience = timeout;
         Address = address;
         _channel = GrpcChannel.ForAddress(address, new GrpcChannelOptions { MaxReceiveMessageSize = LargestMessageBytes });
     }
 
     public Uri Address { get; }
+
+    /// <summary>Longest time to wait for an answer, or for a service that went away to come back.</summary>
+    public TimeSpan Patience { get; }
+
+    /// <summary>Whether the service is one of this command's own, which ends with it.</summary>
+    public bool IsOwn => _own is not null;
 
     public ScreeningService.ScreeningServiceClient Screening => new(_channel);
 
@@ -36,63 +36,63 @@ internal sealed class ServiceConnection : IAsyncDisposable
 
     public PolicyService.PolicyServiceClient Policies => new(_channel);
 
+    public ImportService.ImportServiceClient Imports => new(_channel);
+
+    public HistoryService.HistoryServiceClient History => new(_channel);
+
+    public MaintenanceService.MaintenanceServiceClient Maintenance => new(_channel);
+
     /// <summary>Opens what the options ask for.</summary>
     /// <param name="options">Options.</param>
     /// <param name="parsed">What the user wrote.</param>
-    /// <param name="needsCatalogue">Whether the command asks for structures; checking files does not.</param>
     /// <param name="cancellation">Ends the wait.</param>
-    public static async Task<ServiceConnection> OpenAsync(ServiceOptions options, ParseResult parsed, bool needsCatalogue, CancellationToken cancellation)
+    /// <param name="needsCatalogue">Whether the command asks for structures; checking files does not.</param>
+    public static async Task<ServiceConnection> OpenAsync(ServiceOptions options, ParseResult parsed, CancellationToken cancellation, bool needsCatalogue = true)
     {
-        var timeout = parsed.GetValue(options.Timeout);
-        if (timeout is not (> 0 and < 86400))
+        var seconds = parsed.GetValue(options.Timeout);
+        if (seconds is not (> 0 and < 86400))
         {
             throw new BadInputException("--timeout is a number of seconds greater than 0 and below 86400.");
         }
 
+        var timeout = TimeSpan.FromSeconds(seconds);
         var server = parsed.GetValue(options.Server);
-        var catalogue = parsed.GetValue(options.Catalogue) ?? [];
-        var policies = parsed.GetValue(options.Policies) ?? [];
+        var data = parsed.GetValue(options.Data);
+        var catalogue = options.RecordsOnly ? [] : parsed.GetValue(options.Catalogue) ?? [];
+        var policies = options.RecordsOnly ? [] : parsed.GetValue(options.Policies) ?? [];
         if (server is not null)
         {
-            if (catalogue.Length > 0 || policies.Length > 0)
+            if (data is not null || catalogue.Length > 0 || policies.Length > 0)
             {
-                throw new BadInputException("--server names a running service, which has its own catalogue and policies; leave out --catalogue and --policies.");
+                throw new BadInputException("--server names a running service, which has its own records; leave out --data, --catalogue and --policies.");
             }
 
             return Uri.TryCreate(server, UriKind.Absolute, out var address) && address.Scheme is "http" or "https"
-                ? new ServiceConnection(null, address, TimeSpan.FromSeconds(timeout))
+                ? new ServiceConnection(null, address, timeout)
                 : throw new BadInputException($"--server is an address such as http://127.0.0.1:5080; found \"{server}\".");
+        }
+
+        if (data is not null)
+        {
+            return catalogue.Length > 0 || policies.Length > 0
+                ? throw new BadInputException("--data names a folder of records, which come in by `import`; leave out --catalogue and --policies.")
+                : await StartAsync(new HostSettings { DataFolder = Folders.Checked("--data", data), Quiet = true }, timeout, cancellation);
+        }
+
+        if (options.RecordsOnly)
+        {
+            throw new BadInputException("Say which records: --data FOLDER for those in a folder, or --server ADDRESS for those of a running service.");
         }
 
         var source = needsCatalogue || catalogue.Length > 0
             ? SourceOf(catalogue, policies)
             : new CatalogueSource([], policies.Length > 0 ? policies : [Path.Combine(DemoFolder.Find(), "policies")]);
-        return await StartAsync(source, 0, TimeSpan.FromSeconds(timeout), cancellation);
+        return await StartAsync(source, 0, timeout, cancellation);
     }
 
-    /// <summary>Starts a service of this process and waits until its catalogue is ready.</summary>
-    public static async Task<ServiceConnection> StartAsync(CatalogueSource source, int port, TimeSpan timeout, CancellationToken cancellation)
-    {
-        var app = ServiceHost.Build(new HostSettings { Source = source, Port = port, Quiet = true });
-        try
-        {
-            await app.StartAsync(cancellation);
-            await app.Services.GetRequiredService<ICatalogue>().CurrentAsync(cancellation);
-            return new ServiceConnection(app, ServiceHost.AddressOf(app), timeout);
-        }
-        catch (Exception error) when (error is CatalogueUnavailableException or OperationCanceledException && app.Services.GetRequiredService<StartFailure>().Reason is not null)
-        {
-            // The worker may stop the host while it is still starting; then the start is cancelled, and the reason is the worker's.
-            var reason = app.Services.GetRequiredService<StartFailure>().Reason!;
-            await app.DisposeAsync();
-            throw reason;
-        }
-        catch (IOException error) when (error.InnerException is Microsoft.AspNetCore.Connections.AddressInUseException or SocketException)
-        {
-            await app.DisposeAsync();
-            throw new BadInputException(FormattableString.Invariant($"Port {port} is in use; give another one with --port."));
-        }
-    }
+    /// <summary>Starts a service of this process on files and waits until its catalogue is ready.</summary>
+    public static Task<ServiceConnection> StartAsync(CatalogueSource source, int port, TimeSpan timeout, CancellationToken cancellation) =>
+        StartAsync(new HostSettings { Source = source, Port = port, Quiet = true }, timeout, cancellation);
 
     /// <summary>What a command reads where the user names nothing: the demo.</summary>
     public static CatalogueSource SourceOf(string[] catalogue, string[] policies)
@@ -112,12 +112,27 @@ internal sealed class ServiceConnection : IAsyncDisposable
     }
 
     /// <summary>Deadline and cancellation of a call.</summary>
-    public CallOptions Call(CancellationToken cancellation) =>
-        new(deadline: TimeProvider.System.GetUtcNow().UtcDateTime + _timeout, cancellationToken: cancellation);
+    public CallOptions Call(CancellationToken cancellation) => Call(TimeSpan.Zero, cancellation);
+
+    /// <summary>Deadline and cancellation of a call that may take longer than others.</summary>
+    /// <param name="more">Added to the longest time to wait.</param>
+    /// <param name="cancellation">Ends the wait.</param>
+    public CallOptions Call(TimeSpan more, CancellationToken cancellation) =>
+        new(deadline: TimeProvider.System.GetUtcNow().UtcDateTime + Patience + more, cancellationToken: cancellation);
+
+    /// <summary>A writing call, tried again where the connection is cut off: it must carry a request id, or be harmless to repeat.</summary>
+    /// <param name="author">Who writes.</param>
+    /// <param name="call">The call.</param>
+    /// <param name="cancellation">Ends the wait.</param>
+    public Task<T> WriteAsync<T>(Author author, Func<CallOptions, AsyncUnaryCall<T>> call, CancellationToken cancellation) =>
+        WriteAsync(author, o => call(o).ResponseAsync, cancellation);
+
+    /// <inheritdoc cref="WriteAsync{T}(Author, Func{CallOptions, AsyncUnaryCall{T}}, CancellationToken)"/>
+    public Task<T> WriteAsync<T>(Author author, Func<CallOptions, Task<T>> call, CancellationToken cancellation) =>
+        Retries.CallAsync(() => call(Call(cancellation).WithHeaders(author.Metadata())), Patience, Console.Error.WriteLine, cancellation);
 
     /// <summary>Waits until the service of this process is stopped.</summary>
-    public Task WaitAsync(CancellationToken cancellation) =>
-        _own is null ? Task.CompletedTask : Task.WhenAny(_own.WaitForShutdownAsync(cancellation), Task.Delay(Timeout.Infinite, cancellation));
+    public Task WaitAsync(CancellationToken cancellation) => _own?.WaitAsync(cancellation) ?? Task.CompletedTask;
 
     public async ValueTask DisposeAsync()
     {
@@ -126,5 +141,11 @@ internal sealed class ServiceConnection : IAsyncDisposable
         {
             await _own.DisposeAsync();
         }
+    }
+
+    private static async Task<ServiceConnection> StartAsync(HostSettings settings, TimeSpan timeout, CancellationToken cancellation)
+    {
+        var own = await OwnService.StartAsync(settings, cancellation);
+        return new ServiceConnection(own, own.Address, timeout);
     }
 }

@@ -9,18 +9,23 @@ internal sealed class ServiceOptions
 
     public Option<string?> Server { get; } = new("--server")
     {
-        Description = "Address of a running service, for instance http://127.0.0.1:5080. Without it, a service of this command's own reads --catalogue and --policies.",
+        Description = "Address of a running service, for instance http://127.0.0.1:5080. Without it, a service of this command's own answers.",
+    };
+
+    public Option<string?> Data { get; } = new("--data")
+    {
+        Description = "Folder of records: a service of this command's own answers from them. Made where it does not exist.",
     };
 
     public Option<string[]> Catalogue { get; } = new("--catalogue")
     {
-        Description = "Files or folders of structures; the demo's where neither this nor --server is given.",
+        Description = "Files or folders of structures, kept for this command only; the demo's where no --server, --data or --catalogue is given.",
         AllowMultipleArgumentsPerToken = true,
     };
 
     public Option<string[]> Policies { get; } = new("--policies")
     {
-        Description = "Files or folders of policies; the demo's where neither this nor --server is given.",
+        Description = "Files or folders of policies, kept for this command only; the demo's where no --server, --data or --policies is given.",
         AllowMultipleArgumentsPerToken = true,
     };
 
@@ -30,12 +35,25 @@ internal sealed class ServiceOptions
         DefaultValueFactory = _ => DefaultTimeoutSeconds,
     };
 
-    /// <summary>Adds the options to a command.</summary>
+    /// <summary>Whether the command works on lasting records only, so that neither files nor the demo can stand in for them.</summary>
+    public bool RecordsOnly { get; private set; }
+
+    /// <summary>Adds the options to a command that only reads a catalogue.</summary>
     public void AddTo(Command command)
     {
         command.Options.Add(Server);
+        command.Options.Add(Data);
         command.Options.Add(Catalogue);
         command.Options.Add(Policies);
+        command.Options.Add(Timeout);
+    }
+
+    /// <summary>Adds the options to a command that changes or examines records: <c>--server</c> or <c>--data</c>.</summary>
+    public void AddRecordsTo(Command command)
+    {
+        RecordsOnly = true;
+        command.Options.Add(Server);
+        command.Options.Add(Data);
         command.Options.Add(Timeout);
     }
 }

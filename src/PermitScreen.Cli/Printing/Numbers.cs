@@ -30,6 +30,28 @@ internal static class Numbers
     /// <summary>A number between 0 and a few, in the fixed form of factors in arithmetic.</summary>
     public static string Fixed(double value) => value.ToString("0.000", CultureInfo.InvariantCulture);
 
+    /// <summary>A count, with separators: 41,200.</summary>
+    public static string Count(long value) => value.ToString("#,0", CultureInfo.InvariantCulture);
+
+    /// <summary>So many of something: "1 truss", "41,200 trusses".</summary>
+    public static string Counted(long value, string one, string many) => $"{Count(value)} {(value == 1 ? one : many)}";
+
+    /// <summary>A length of time, to the second.</summary>
+    public static string Duration(TimeSpan time) => time switch
+    {
+        { TotalSeconds: < 10 } when time.Milliseconds != 0 => string.Create(CultureInfo.InvariantCulture, $"{time.TotalSeconds:0.0} s"),
+        { TotalMinutes: < 1 } => string.Create(CultureInfo.InvariantCulture, $"{time.Seconds} s"),
+        { TotalHours: < 1 } => string.Create(CultureInfo.InvariantCulture, $"{time.Minutes} min {time.Seconds:00} s"),
+        _ => string.Create(CultureInfo.InvariantCulture, $"{(long)time.TotalHours} h {time.Minutes:00} min"),
+    };
+
+    /// <summary>An instant, UTC, to the second; empty where there is none.</summary>
+    public static string Instant(Google.Protobuf.WellKnownTypes.Timestamp? instant) =>
+        instant?.ToDateTime().ToString("yyyy-MM-dd HH:mm:ss", CultureInfo.InvariantCulture) ?? "";
+
+    /// <summary>A catalogue version; a dash where there is none.</summary>
+    public static string Version(bool has, long version) => has ? version.ToString(CultureInfo.InvariantCulture) : "-";
+
     public static string Date(Google.Type.Date date) => string.Create(CultureInfo.InvariantCulture, $"{date.Year:0000}-{date.Month:00}-{date.Day:00}");
 
     public static string Words(Verdict verdict) => verdict switch
@@ -38,6 +60,20 @@ internal static class Numbers
         Verdict.PassWithConditions => "PASS_WITH_CONDITIONS",
         Verdict.Fail => "FAIL",
         _ => "NOT_ASSESSED",
+    };
+
+    public static string Words(StructureState state) => state switch
+    {
+        StructureState.Unspecified => "not said",
+        _ => state.ToString().ToLowerInvariant(),
+    };
+
+    public static string Words(PolicyState state) => state switch
+    {
+        PolicyState.Draft => "draft",
+        PolicyState.InForce => "in force",
+        PolicyState.Withdrawn => "withdrawn",
+        _ => "not said",
     };
 
     public static string Words(RungOutcome outcome) => outcome switch

@@ -1,3 +1,5 @@
+using System.Globalization;
+
 namespace PermitScreen.Mechanics.Lines;
 
 public sealed partial class InfluenceLine
@@ -137,30 +139,48 @@ public sealed partial class InfluenceLine
         return sum;
     }
 
+    /// <summary>A line from the numbers that an earlier one had, to the bit; unlike <see cref="FromPoints(ReadOnlySpan{double}, ReadOnlySpan{double}, ReadOnlySpan{double})"/> it inserts nothing.</summary>
+    /// <param name="xM">Breakpoints, m, as in <see cref="XM"/>.</param>
+    /// <param name="leftOrdinates">Ordinates just below each breakpoint, as in <see cref="LeftOrdinates"/>.</param>
+    /// <param name="rightOrdinates">Ordinates just above each breakpoint, as in <see cref="RightOrdinates"/>.</param>
+    /// <param name="maxAbsSlope">As in <see cref="MaxAbsSlope"/>.</param>
+    /// <returns>The line; <see langword="null"/> where the numbers cannot be those of a line.</returns>
+    public static InfluenceLine? TryRestore(
+        ReadOnlySpan<double> xM, ReadOnlySpan<double> leftOrdinates, ReadOnlySpan<double> rightOrdinates, double maxAbsSlope) =>
+        Problem(xM, leftOrdinates, rightOrdinates) is null && double.IsFinite(maxAbsSlope) && maxAbsSlope >= 0
+            ? new InfluenceLine(xM.ToArray(), leftOrdinates.ToArray(), rightOrdinates.ToArray(), maxAbsSlope)
+            : null;
+
     private static void Check(ReadOnlySpan<double> xM, ReadOnlySpan<double> left, ReadOnlySpan<double> right)
+    {
+        if (Problem(xM, left, right) is { } problem)
+        {
+            throw new ArgumentException(problem, nameof(xM));
+        }
+    }
+
+    private static string? Problem(ReadOnlySpan<double> xM, ReadOnlySpan<double> left, ReadOnlySpan<double> right)
     {
         if (xM.Length < 2 || left.Length != xM.Length || right.Length != xM.Length)
         {
-            throw new ArgumentException(
-                $"a line needs two points or more and as many ordinates; found {xM.Length} points, {left.Length} left and {right.Length} right ordinates", nameof(xM));
+            return string.Create(
+                CultureInfo.InvariantCulture,
+                $"a line needs two points or more and as many ordinates; found {xM.Length} points, {left.Length} left and {right.Length} right ordinates");
         }
 
         for (var k = 0; k < xM.Length; k++)
         {
             if (!double.IsFinite(xM[k]) || !double.IsFinite(left[k]) || !double.IsFinite(right[k]))
             {
-                throw new ArgumentException($"point {k} of a line is not finite", nameof(xM));
+                return string.Create(CultureInfo.InvariantCulture, $"point {k} of a line is not finite");
             }
 
             if (k > 0 && !(xM[k] > xM[k - 1]))
             {
-                throw new ArgumentException($"breakpoints must increase; point {k} does not", nameof(xM));
+                return string.Create(CultureInfo.InvariantCulture, $"breakpoints must increase; point {k} does not");
             }
         }
 
-        if (left[0] != 0 || right[^1] != 0)
-        {
-            throw new ArgumentException("a line is zero outside: its first left and last right ordinate must be 0", nameof(left));
-        }
+        return left[0] != 0 || right[^1] != 0 ? "a line is zero outside: its first left and last right ordinate must be 0" : null;
     }
 }

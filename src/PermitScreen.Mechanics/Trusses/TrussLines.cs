@@ -45,6 +45,50 @@ public sealed class TrussLines
     /// <returns>The line; <see langword="null"/> where the support does not hold vertically.</returns>
     public InfluenceLine? ReactionY(int supportIndex) => _reactionY[supportIndex];
 
+    /// <summary>Number of members.</summary>
+    public int MemberCount => _axial.Length;
+
+    /// <summary>Number of supports.</summary>
+    public int SupportCount => _reactionX.Length;
+
+    /// <summary>Lines that were made by <see cref="TrySolve"/> before and kept; the caller vouches that they are those of its truss.</summary>
+    /// <param name="axial">Line of each member.</param>
+    /// <param name="reactionX">Line of each support's horizontal reaction; null where it does not hold so.</param>
+    /// <param name="reactionY">Line of each support's vertical reaction; null where it does not hold so. Length as <paramref name="reactionX"/>.</param>
+    /// <param name="quality">How well the equations were solved.</param>
+    /// <exception cref="ArgumentException">The lengths of the reactions differ.</exception>
+    public static TrussLines Restore(
+        IReadOnlyList<InfluenceLine> axial, IReadOnlyList<InfluenceLine?> reactionX, IReadOnlyList<InfluenceLine?> reactionY, SolveQuality quality)
+    {
+        if (reactionX.Count != reactionY.Count)
+        {
+            throw new ArgumentException(
+                string.Create(CultureInfo.InvariantCulture, $"each support has both components; found {reactionX.Count} and {reactionY.Count}"), nameof(reactionY));
+        }
+
+        return new TrussLines([.. axial], [.. reactionX], [.. reactionY], quality);
+    }
+
+    /// <summary>The same lines for a truss whose members and supports stand in another order.</summary>
+    /// <param name="memberOrder">For each member of that truss, its index here.</param>
+    /// <param name="supportOrder">For each support of that truss, its index here.</param>
+    public TrussLines Reordered(ReadOnlySpan<int> memberOrder, ReadOnlySpan<int> supportOrder)
+    {
+        var axial = new InfluenceLine[memberOrder.Length];
+        for (var m = 0; m < axial.Length; m++)
+        {
+            axial[m] = _axial[memberOrder[m]];
+        }
+
+        var (reactionX, reactionY) = (new InfluenceLine?[supportOrder.Length], new InfluenceLine?[supportOrder.Length]);
+        for (var s = 0; s < supportOrder.Length; s++)
+        {
+            (reactionX[s], reactionY[s]) = (_reactionX[supportOrder[s]], _reactionY[supportOrder[s]]);
+        }
+
+        return new TrussLines(axial, reactionX, reactionY, Quality);
+    }
+
     /// <summary>Solves a truss for 1 kN downwards at each deck panel point and makes the lines of all its effects.</summary>
     /// <param name="model">The truss.</param>
     /// <param name="faults">Gets one fault where the truss is a mechanism (naming the joints that move) or cannot be solved to the accuracy promised.</param>

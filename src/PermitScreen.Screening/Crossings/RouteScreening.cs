@@ -20,7 +20,7 @@ public static class RouteScreening
         ApplicationRecord application, PolicyDocument policy, CatalogueSnapshot catalogue, DateOnly asOf, CancellationToken cancellation)
     {
         var crossings = application.Crossings
-            .Select(c => OfCrossing(c, application, policy, catalogue.Find(c.Structure), asOf, cancellation))
+            .Select(c => OfCrossing(c, application, policy, catalogue.Find(c.Structure)?.Prepared, asOf, cancellation))
             .ToImmutableArray();
         var worst = crossings.Select(c => c.Verdict).DefaultIfEmpty(Verdict.NotAssessed).Aggregate(Verdicts.Worse);
         return new RouteResult(worst, crossings, catalogue.Version);
@@ -90,6 +90,10 @@ public static class RouteScreening
         if (structure.Rated is not { } rated)
         {
             findings.NotAssessed(ReasonCode.DataMissing, "The roadway is not in the catalogue.", "roadway");
+            foreach (var gap in record.Gaps)
+            {
+                findings.NotAssessed(gap.Code, gap.Message, gap.Field);
+            }
         }
         else if (!states.IsEmpty)
         {

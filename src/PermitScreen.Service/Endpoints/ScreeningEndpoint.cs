@@ -2,19 +2,17 @@ using Grpc.Core;
 using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Contracts.V1;
 using PermitScreen.Mechanics.Faults;
-using PermitScreen.Rating.Policies;
 using PermitScreen.Screening.Crossings;
 using PermitScreen.Service.Errors;
 using PermitScreen.Service.Mapping;
-using PolicyState = PermitScreen.Rating.Policies.PolicyState;
+using PermitScreen.Service.Revisions;
 
 namespace PermitScreen.Service.Endpoints;
 
 /// <summary>ScreeningService: screens one application over its route.</summary>
 /// <param name="catalogue">Catalogue.</param>
-/// <param name="policies">Policies.</param>
 /// <param name="today">The authority's civil date.</param>
-public sealed class ScreeningEndpoint(ICatalogue catalogue, PolicyShelf policies, AuthorityDate today) : ScreeningService.ScreeningServiceBase
+public sealed class ScreeningEndpoint(ICatalogue catalogue, AuthorityDate today) : ScreeningService.ScreeningServiceBase
 {
     private const int DefaultNextEffects = 5;
     private const int MostNextEffects = 200;
@@ -29,7 +27,12 @@ public sealed class ScreeningEndpoint(ICatalogue catalogue, PolicyShelf policies
             faults.Add("application", "Missing; give the application to be screened.");
         }
 
-        Names.Policy(faults, "policy", request.Policy);
+        Names.PolicyReference(faults, "policy", request.Policy);
+        if (request.HasAsOfVersion && request.HasMinCatalogueVersion)
+        {
+            faults.Add("as_of_version", "Given together with min_catalogue_version; ask for one exact version, or for a current answer.");
+        }
+
         var asOf = faults.Date("as_of_date", request.AsOfDate) ?? today.Today();
         var next = faults.Optional("next_effects", request.HasNextEffects, request.NextEffects, 0, MostNextEffects) ?? DefaultNextEffects;
         if (application?.TravelTo < asOf)
@@ -42,15 +45,8 @@ public sealed class ScreeningEndpoint(ICatalogue catalogue, PolicyShelf policies
             throw BadRequests.From("The request", faults.All);
         }
 
-        var document = policies.Find(request.Policy)?.Document
-            ?? throw BadRequests.NotFound("permitscreen.dev/Policy", request.Policy, $"Known are: {string.Join(", ", policies.Names)}.");
-        RequireUsable(document, asOf);
-        var snapshot = await catalogue.CurrentAsync(context.CancellationToken);
-        if (request.HasMinCatalogueVersion && snapshot.Version < request.MinCatalogueVersion)
-        {
-            throw new RpcException(new Status(StatusCode.Unavailable, FormattableString.Invariant($"The catalogue is at version {snapshot.Version}; {request.MinCatalogueVersion} was asked for. No verdict was given.")));
-        }
-
+        var snapshot = await SnapshotAsync(request, [.. application.Crossings.Select(c => c.Structure).Distinct()], context.CancellationToken);
+        var policy = PolicyDocuments.Usable(snapshot, request.Policy, asOf);
         if (request.ValidateOnly)
         {
             var checkedOnly = new ScreenApplicationResponse();
@@ -58,21 +54,26 @@ public sealed class ScreeningEndpoint(ICatalogue catalogue, PolicyShelf policies
             return checkedOnly;
         }
 
-        var result = RouteScreening.Of(application, document, snapshot, asOf, context.CancellationToken);
+        var result = RouteScreening.Of(application, policy, snapshot, asOf, context.CancellationToken);
         var writer = new ScreeningWriter(request.View == ScreeningView.Full, next);
-        return new ScreenApplicationResponse { Screening = writer.Write(result, application, document, asOf) };
+        return new ScreenApplicationResponse { Screening = writer.Write(result, application, policy, asOf) };
     }
 
-    private static void RequireUsable(PolicyDocument policy, DateOnly asOf)
+    private async Task<CatalogueSnapshot> SnapshotAsync(ScreenApplicationRequest request, IReadOnlyCollection<string> structures, CancellationToken cancellation)
     {
-        if (policy.State == PolicyState.Withdrawn)
+        if (request.HasAsOfVersion)
         {
-            throw BadRequests.Precondition(policy.Name, $"{policy.Name} is withdrawn; screen under a policy that is in force.");
+            return await Snapshots.ReadAsync(catalogue, request.AsOfVersion, structures, cancellation);
         }
 
-        if (asOf < policy.InForceFrom || asOf > policy.InForceTo)
+        if (!request.HasMinCatalogueVersion)
         {
-            throw BadRequests.Precondition(policy.Name, FormattableString.Invariant($"{policy.Name} is not in force on {asOf:yyyy-MM-dd}."));
+            return await catalogue.CurrentAsync(null, cancellation);
         }
+
+        var snapshot = await catalogue.CurrentAsync(null, cancellation);
+        return snapshot.Version >= request.MinCatalogueVersion
+            ? snapshot
+            : throw new RpcException(new Status(StatusCode.Unavailable, FormattableString.Invariant($"The catalogue is at version {snapshot.Version}; {request.MinCatalogueVersion} was asked for. No verdict was given.")));
     }
 }

@@ -1,5 +1,7 @@
+using System.Globalization;
 using Google.Rpc;
 using Grpc.Core;
+using PermitScreen.Catalogue.Storage;
 using PermitScreen.Mechanics.Faults;
 
 namespace PermitScreen.Service.Errors;
@@ -55,6 +57,59 @@ public static class BadRequests
             Google.Protobuf.WellKnownTypes.Any.Pack(new PreconditionFailure
             {
                 Violations = { new PreconditionFailure.Types.Violation { Type = "STATE", Subject = subject, Description = message } },
+            }),
+        },
+    }.ToRpcException();
+
+    /// <summary>ALREADY_EXISTS, naming the resource.</summary>
+    /// <param name="type">Resource type.</param>
+    /// <param name="name">Resource name.</param>
+    /// <param name="message">What is there, and what the caller can do.</param>
+    public static RpcException Exists(string type, string name, string message) => new Google.Rpc.Status
+    {
+        Code = (int)Code.AlreadyExists,
+        Message = message,
+        Details = { Google.Protobuf.WellKnownTypes.Any.Pack(new ResourceInfo { ResourceType = type, ResourceName = name, Description = message }) },
+    }.ToRpcException();
+
+    /// <summary>ABORTED: the change rests on a revision that is not the newest; names the newest one.</summary>
+    /// <param name="name">Resource name.</param>
+    /// <param name="newest">Its newest revision.</param>
+    public static RpcException Outdated(string name, RevisionHead newest) => new Google.Rpc.Status
+    {
+        Code = (int)Code.Aborted,
+        Message = string.Create(
+            CultureInfo.InvariantCulture,
+            $"{name} was revised in version {newest.FromVersion} by {newest.Provenance.Actor} (\"{newest.Provenance.Reason}\"), etag {newest.Content.Etag}; read it again, compare, and send the change with that etag. Nothing was changed."),
+        Details =
+        {
+            Google.Protobuf.WellKnownTypes.Any.Pack(new ErrorInfo
+            {
+                Reason = "NEWER_REVISION",
+                Domain = "permitscreen.dev",
+                Metadata =
+                {
+                    { "resource", name },
+                    { "etag", newest.Content.Etag },
+                    { "catalogueVersion", newest.FromVersion.ToString(CultureInfo.InvariantCulture) },
+                },
+            }),
+        },
+    }.ToRpcException();
+
+    /// <summary>OUT_OF_RANGE: there is no such catalogue version.</summary>
+    /// <param name="field">Field that names it.</param>
+    /// <param name="version">Version.</param>
+    /// <param name="newest">The newest one.</param>
+    public static RpcException NoVersion(string field, long version, long newest) => new Google.Rpc.Status
+    {
+        Code = (int)Code.OutOfRange,
+        Message = FormattableString.Invariant($"{field}: there is no catalogue version {version}; versions go up to {newest}."),
+        Details =
+        {
+            Google.Protobuf.WellKnownTypes.Any.Pack(new BadRequest
+            {
+                FieldViolations = { new BadRequest.Types.FieldViolation { Field = field, Description = FormattableString.Invariant($"Found {version}; allowed is a version that was published, up to {newest}.") } },
             }),
         },
     }.ToRpcException();

@@ -20,10 +20,7 @@ internal static class JsonShape
         }
         catch (JsonException error)
         {
-            var hint = error.Message.Contains("start of a property name", StringComparison.Ordinal) || error.Message.Contains("is invalid after a value", StringComparison.Ordinal)
-                ? " Numbers take a decimal point, not a comma: 49.5."
-                : "";
-            faults.Add("", FormattableString.Invariant($"This is not JSON: line {error.LineNumber + 1}, byte {error.BytePositionInLine + 1}: {error.Message.Split(" LineNumber")[0]}{hint}"));
+            faults.Add("", NotJson.Words(error));
         }
     }
 

@@ -82,6 +82,7 @@ internal static class PolicyMapper
     {
         var content = policy.Clone();
         content.Etag = "";
+        content.CatalogueVersion = 0;
         return Etags.Of(content);
     }
 

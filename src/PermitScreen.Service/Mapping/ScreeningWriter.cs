@@ -2,6 +2,7 @@ using PermitScreen.Rating.Checks;
 using PermitScreen.Rating.Policies;
 using PermitScreen.Screening.Applications;
 using PermitScreen.Screening.Crossings;
+using PermitScreen.Service.Revisions;
 using C = PermitScreen.Contracts.V1;
 
 namespace PermitScreen.Service.Mapping;
@@ -25,7 +26,7 @@ internal sealed class ScreeningWriter(bool full, int nextEffects)
                 NotAssessed = result.Count(Rating.Checks.Verdict.NotAssessed),
                 Fail = result.Count(Rating.Checks.Verdict.Fail),
             },
-            Policy = policy.Name,
+            Policy = CanonicalForm.DocumentName(policy.Name, policy.DocumentVersion),
             PolicyEtag = policy.Etag,
             AsOfDate = asOf.ToContract(),
             CatalogueVersion = result.CatalogueVersion,

@@ -64,12 +64,12 @@ internal static class StructureGaps
     }
 
     /// <summary>What a policy asks for and rated effects do not state.</summary>
-    public static IEnumerable<Reason> Under(IEnumerable<ShelvedPolicy> policies, PreparedStructure prepared)
+    public static IEnumerable<Reason> Under(IEnumerable<PolicyDocument> policies, PreparedStructure prepared)
     {
         foreach (var policy in policies)
         {
-            var reasons = (prepared.Rated?.Units.SelectMany(u => u.Effects) ?? []).SelectMany(e => EffectCheck.Gaps(e, policy.Document.Policy));
-            var rules = policy.Document.Standing;
+            var reasons = (prepared.Rated?.Units.SelectMany(u => u.Effects) ?? []).SelectMany(e => EffectCheck.Gaps(e, policy.Policy));
+            var rules = policy.Standing;
             if (prepared.Record.Inspection?.SuperstructureCondition is { } condition && condition <= rules.PoorUpToRating && rules.PoorCondition == DoubtRule.NotAssessed)
             {
                 var poor = FormattableString.Invariant($"A superstructure rated {condition} is in poor condition and is not assessed.");
@@ -78,7 +78,7 @@ internal static class StructureGaps
 
             foreach (var reason in reasons.Distinct())
             {
-                yield return reason with { Message = $"Under {policy.Document.Name}: {reason.Message}" };
+                yield return reason with { Message = $"Under {policy.Name}: {reason.Message}" };
             }
         }
     }

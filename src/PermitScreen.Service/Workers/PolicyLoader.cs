@@ -1,28 +1,28 @@
+using PermitScreen.Contracts.V1;
 using PermitScreen.Mechanics.Faults;
 using PermitScreen.Service.Files;
-using PermitScreen.Service.Mapping;
+using PermitScreen.Service.Revisions;
 
 namespace PermitScreen.Service.Workers;
 
 /// <summary>Reads policies from files.</summary>
 public static class PolicyLoader
 {
-    /// <summary>Every policy of the paths.</summary>
+    /// <summary>Every policy document of the paths.</summary>
     /// <param name="paths">Files or folders.</param>
     /// <exception cref="FileFaultsException">Any file is at fault; all faults of all files are told.</exception>
-    public static IReadOnlyList<ShelvedPolicy> Load(IReadOnlyList<string> paths)
+    public static IReadOnlyList<Policy> Load(IReadOnlyList<string> paths)
     {
-        var policies = new List<ShelvedPolicy>();
+        var policies = new List<Policy>();
         var faulty = new List<(string File, Fault Fault)>();
         foreach (var path in paths.SelectMany(p => FolderFiles.Of(p, FileSchemas.Policy)))
         {
             var faults = new FaultList();
-            if (FileSchemas.ReadPolicy(File.ReadAllText(path), faults)?.Policy is { } contract)
+            if (FileSchemas.ReadPolicy(File.ReadAllText(path), faults)?.Policy is { } policy)
             {
-                if (PolicyMapper.Map(contract, faults.Under("policy")) is { } document)
+                if (Door.Policy(policy, faults.Under("policy")) is not null)
                 {
-                    contract.Etag = document.Etag;
-                    policies.Add(new ShelvedPolicy(contract, document));
+                    policies.Add(policy);
                 }
             }
             else if (!faults.Any)
@@ -33,7 +33,7 @@ public static class PolicyLoader
             faulty.AddRange(faults.All.Select(f => (path, f)));
         }
 
-        foreach (var twice in policies.GroupBy(p => p.Document.Name).Where(g => g.Count() > 1))
+        foreach (var twice in policies.GroupBy(CanonicalForm.DocumentName).Where(g => g.Count() > 1))
         {
             faulty.Add((string.Join(", ", paths), new Fault("policy.name", $"{twice.Key} stands in {twice.Count()} files.")));
         }

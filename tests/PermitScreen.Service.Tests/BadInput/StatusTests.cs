@@ -71,7 +71,7 @@ public sealed class StatusTests(DemoService demo) : IClassFixture<DemoService>
     }
 
     [Fact]
-    public async Task Changes_are_not_offered_where_the_catalogue_comes_from_files()
+    public async Task Changes_are_refused_where_the_records_end_with_the_service()
     {
         var structure = new Structure { Name = "structures/P14-0032" };
         var catalogue = demo.Service.Catalogue;
@@ -81,7 +81,7 @@ public sealed class StatusTests(DemoService demo) : IClassFixture<DemoService>
             await Assert.ThrowsAsync<RpcException>(async () => await catalogue.UpdateStructureAsync(new UpdateStructureRequest { Structure = structure })),
             await Assert.ThrowsAsync<RpcException>(async () => await catalogue.DeleteStructureAsync(new DeleteStructureRequest { Name = structure.Name })),
         };
-        Assert.All(errors, e => Assert.Equal(StatusCode.Unimplemented, e.StatusCode));
+        Assert.All(errors, e => Assert.Equal(StatusCode.FailedPrecondition, e.StatusCode));
     }
 
     [Fact]

@@ -17,6 +17,7 @@ public sealed partial class DescriptorTests
     private static readonly Dictionary<string, string> AnswersOnly = new(StringComparer.Ordinal)
     {
         ["permitscreen.v1.Structure.catalogue_version"] = "output only; versions count from 1",
+        ["permitscreen.v1.Policy.catalogue_version"] = "output only; versions count from 1",
         ["permitscreen.v1.ListStructuresResponse.catalogue_version"] = "an answer; versions count from 1",
         ["permitscreen.v1.DeleteStructureResponse.catalogue_version"] = "an answer; versions count from 1",
         ["permitscreen.v1.Screening.catalogue_version"] = "an answer; versions count from 1",

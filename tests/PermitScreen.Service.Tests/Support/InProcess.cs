@@ -16,7 +16,7 @@ namespace PermitScreen.Service.Tests.Support;
 /// </summary>
 internal sealed class InProcess(Application application, IReadOnlyList<Structure> structures, Contracts.V1.Policy policy, DateOnly asOf)
 {
-    private readonly LineCache _lines = new();
+    private readonly LineLibrary _lines = new();
     private ImmutableDictionary<string, PreparedStructure>? _structures;
     private ApplicationRecord? _application;
     private PolicyDocument? _policy;
@@ -65,5 +65,5 @@ internal sealed class InProcess(Application application, IReadOnlyList<Structure
 
     private RouteResult Screen(
         ApplicationRecord record, PolicyDocument document, ImmutableDictionary<string, PreparedStructure> prepared, CancellationToken cancellation = default) =>
-        RouteScreening.Of(record, document, new CatalogueSnapshot(1, prepared.ToImmutableSortedDictionary(StringComparer.Ordinal)), asOf, cancellation);
+        RouteScreening.Of(record, document, Ready.Snapshot(prepared.Values), asOf, cancellation);
 }
