@@ -66,7 +66,7 @@ catch (FileFaultsException error)
 catch (StoreException error)
 {
     await Console.Error.WriteLineAsync(error.Message);
-    return error.Trouble is StoreTrouble.Locked or StoreTrouble.NewerSchema or StoreTrouble.NotAllowed or StoreTrouble.Damaged ? ExitCodes.BadInput : ExitCodes.NoAnswer;
+    return error.Trouble is StoreTrouble.Locked or StoreTrouble.NewerSchema or StoreTrouble.NotAllowed or StoreTrouble.Damaged or StoreTrouble.Other ? ExitCodes.BadInput : ExitCodes.NoAnswer;
 }
 catch (Exception error) when (error is IOException or UnauthorizedAccessException)
 {

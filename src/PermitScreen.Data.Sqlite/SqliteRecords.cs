@@ -50,6 +50,9 @@ public sealed class SqliteRecords : IAsyncDisposable
     /// <summary>Whether the file of the lines was missing, damaged or of another schema, so that it was made anew; what was there is kept beside it.</summary>
     public bool LinesWereLost => _lines.WereLost;
 
+    /// <summary>File of the records, for tests of what happens to it.</summary>
+    internal RecordsFile File => _file;
+
     /// <summary>Opens the records of a folder; makes them where there are none, and brings them to the newest schema.</summary>
     /// <param name="settings">Where they are and how they are kept.</param>
     /// <param name="now">When, for the first audit entry.</param>

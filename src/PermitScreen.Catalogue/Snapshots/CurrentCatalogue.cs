@@ -149,10 +149,10 @@ public sealed class CurrentCatalogue : ICatalogue, IAsyncDisposable
         }
 
         // The reading is not this caller's: it goes on for the others when he gives up.
-        return await Task.Run(() => RefreshAsync(stamp), CancellationToken.None).WaitAsync(cancellation);
+        return await Task.Run(() => BringUpToAsync(stamp), CancellationToken.None).WaitAsync(cancellation);
     }
 
-    private async Task<CatalogueSnapshot> RefreshAsync(VersionStamp stamp)
+    private async Task<CatalogueSnapshot> BringUpToAsync(VersionStamp stamp)
     {
         await _refreshing.WaitAsync(_life.Token);
         try
@@ -229,7 +229,7 @@ public sealed class CurrentCatalogue : ICatalogue, IAsyncDisposable
         }
     }
 
-    private async Task<T> TellingAsync<T>(Func<Task<T>> work, CancellationToken cancellation)
+    private static async Task<T> TellingAsync<T>(Func<Task<T>> work, CancellationToken cancellation)
     {
         try
         {
@@ -239,9 +239,9 @@ public sealed class CurrentCatalogue : ICatalogue, IAsyncDisposable
         {
             throw new CatalogueUnavailableException(trouble.Message, trouble);
         }
-        catch (OperationCanceledException ended) when (_life.IsCancellationRequested && !cancellation.IsCancellationRequested)
+        catch (OperationCanceledException ended) when (!cancellation.IsCancellationRequested)
         {
-            throw new CatalogueUnavailableException("The catalogue is being closed; ask again when the service is up.", ended);
+            throw new CatalogueUnavailableException("The reading was broken off because the catalogue is being closed; ask again when the service is up.", ended);
         }
     }
 }

@@ -67,6 +67,24 @@ public static class StructurePreparation
         return new PreparedStructure(record with { Gaps = [.. gaps] }, rated, notRated.ToImmutable(), named.ToImmutable(), residual);
     }
 
+    /// <summary>Whether every truss of a revision has lines; adds faults where one is a mechanism or cannot be solved accurately. Cheaper than to prepare it.</summary>
+    /// <param name="record">Revision.</param>
+    /// <param name="source">Gives the lines.</param>
+    /// <param name="faults">Takes what is wrong.</param>
+    public static bool HasLines(StructureRecord record, ILineSource source, FaultList faults)
+    {
+        var before = faults.Count;
+        for (var u = 0; u < record.Units.Length; u++)
+        {
+            if (record.Units[u].Truss is { } truss)
+            {
+                source.GetOrSolve(truss, faults.At("units", u).Under("truss"));
+            }
+        }
+
+        return faults.Count == before;
+    }
+
     private sealed class UnitPreparation(UnitRecord unit, TrussModel truss, TrussLines lines)
     {
         private readonly List<Reason> _gaps = [.. unit.Gaps];

@@ -47,7 +47,7 @@ public sealed class VersionConfirmation(Func<CancellationToken, Task<VersionStam
             {
                 callers.SetResult(await read(life));
             }
-            catch (OperationCanceledException)
+            catch (OperationCanceledException) when (life.IsCancellationRequested)
             {
                 callers.SetCanceled(life);
             }

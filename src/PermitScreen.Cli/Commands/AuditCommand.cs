@@ -33,7 +33,7 @@ internal static class AuditCommand
                 return ExitCodes.Passed;
             }
 
-            var table = Tables.Create(">Entry", "When, UTC", "Who", "What", "To what", "Why", ">Version", "Hash begins");
+            var table = Tables.Create(">Entry", "=When, UTC", "Who", "What", "To what", "Why", ">Version", "=Hash begins");
             foreach (var e in entries)
             {
                 table.AddTexts(

@@ -28,7 +28,7 @@ internal static class BackupCommand
             await using var target = new TemporaryFile(path);
             var head = await ReadAsync(connection, target.Stream, cancellation);
             target.Keep(overwrite: false, toDisk: true);
-            Console.Out.WriteLine(FormattableString.Invariant($"{path}: {Numbers.Count(head.SizeBytes)} bytes, catalogue version {head.CatalogueVersion}, newest audit hash {head.NewestHash}"));
+            Console.Out.WriteLine(FormattableString.Invariant($"{path}: {Numbers.Count(head.SizeBytes)} bytes, catalogue version {head.CatalogueVersion}, hash of the audit entry that made it {head.VersionHash}"));
             return ExitCodes.Passed;
         });
         return command;

@@ -32,7 +32,7 @@ internal static class ChangesCommand
                 return ExitCodes.Passed;
             }
 
-            var table = Tables.Create(">Version", "When, UTC", "Who", "What", "Why", ">Added", ">Revised", ">Removed");
+            var table = Tables.Create(">Version", "=When, UTC", "Who", "What", "Why", ">Added", ">Revised", ">Removed");
             foreach (var s in sets)
             {
                 table.AddTexts(

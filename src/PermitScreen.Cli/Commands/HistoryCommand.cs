@@ -33,7 +33,7 @@ internal static class HistoryCommand
                 return ExitCodes.Passed;
             }
 
-            var table = Tables.Create(">From version", ">To version", "When, UTC", "Who", "Why", "Etag");
+            var table = Tables.Create(">From version", ">To version", "=When, UTC", "Who", "Why", "=Etag");
             foreach (var r in revisions)
             {
                 table.AddTexts(Numbers.Version(r.HasFromVersion, r.FromVersion), r.HasToVersion ? Numbers.Version(true, r.ToVersion) : "newest", Numbers.Instant(r.MadeAt), r.Actor, r.Reason, r.Etag);

@@ -23,7 +23,7 @@ internal static class ImportCommand
         var service = new ServiceOptions();
         var command = new Command("import", "Import structures and policies as one change set; broken off, the same command goes on where it was.") { paths, allowPartial, keep, piece, json };
         writing.AddTo(command);
-        service.AddRecordsTo(command);
+        service.AddRecordsTo(command, makes: true);
         command.SetAction(async (parsed, cancellation) =>
         {
             var settings = new ImportSettings(

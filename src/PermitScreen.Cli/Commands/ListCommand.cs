@@ -55,7 +55,7 @@ internal static class ListCommand
 
     private static Table TableOf(IEnumerable<Structure> structures)
     {
-        var table = Tables.Create("Structure", "Title", "State", "Units", ">From version", "Etag");
+        var table = Tables.Create("=Structure", "Title", "State", "Units", ">From version", "=Etag");
         foreach (var s in structures)
         {
             table.AddTexts(s.Name, s.Title, Numbers.Words(s.State), string.Join(", ", s.Units.Select(u => u.UnitId)), s.CatalogueVersion.ToString(CultureInfo.InvariantCulture), s.Etag);
@@ -66,7 +66,7 @@ internal static class ListCommand
 
     private static Table TableOf(IEnumerable<Policy> policies)
     {
-        var table = Tables.Create("Policy", "Title", "State", "In force", "Confirmed by", ">From version", "Etag");
+        var table = Tables.Create("=Policy", "Title", "State", "=In force", "Confirmed by", ">From version", "=Etag");
         foreach (var p in policies)
         {
             table.AddTexts(

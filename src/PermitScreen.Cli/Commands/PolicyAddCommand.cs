@@ -17,7 +17,7 @@ internal static class PolicyAddCommand
         var service = new ServiceOptions();
         var command = new Command("add", "Add a policy document as a draft.") { file };
         writing.AddTo(command);
-        service.AddRecordsTo(command);
+        service.AddRecordsTo(command, makes: true);
         command.SetAction(async (parsed, cancellation) =>
         {
             var request = new CreatePolicyRequest { Policy = Read(parsed.GetValue(file)!), RequestId = Guid.NewGuid().ToString(), ChangeReason = writing.Reason(parsed) };

@@ -23,7 +23,7 @@ internal static class RestoreCommand
         var service = new ServiceOptions();
         var command = new Command("restore", "Replace the records by those of a backup, all or nothing, while the service goes on. What is replaced is kept.") { file, checkOnly };
         writing.AddTo(command);
-        service.AddRecordsTo(command);
+        service.AddRecordsTo(command, makes: true);
         command.SetAction(async (parsed, cancellation) =>
         {
             var path = parsed.GetValue(file)!;

@@ -74,8 +74,13 @@ internal sealed class ServiceConnection : IAsyncDisposable
 
         if (data is not null)
         {
-            return catalogue.Length > 0 || policies.Length > 0
-                ? throw new BadInputException("--data names a folder of records, which come in by `import`; leave out --catalogue and --policies.")
+            if (catalogue.Length > 0 || policies.Length > 0)
+            {
+                throw new BadInputException("--data names a folder of records, which come in by `import`; leave out --catalogue and --policies.");
+            }
+
+            return !options.MakesRecords && !Path.Exists(data)
+                ? throw new BadInputException($"There is no folder {data}; `import` makes one and brings structures in.")
                 : await StartAsync(new HostSettings { DataFolder = Folders.Checked("--data", data), Quiet = true }, timeout, cancellation);
         }
 

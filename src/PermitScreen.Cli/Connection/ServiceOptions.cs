@@ -14,7 +14,7 @@ internal sealed class ServiceOptions
 
     public Option<string?> Data { get; } = new("--data")
     {
-        Description = "Folder of records: a service of this command's own answers from them. Made where it does not exist.",
+        Description = "Folder of records: a service of this command's own answers from them.",
     };
 
     public Option<string[]> Catalogue { get; } = new("--catalogue")
@@ -38,6 +38,9 @@ internal sealed class ServiceOptions
     /// <summary>Whether the command works on lasting records only, so that neither files nor the demo can stand in for them.</summary>
     public bool RecordsOnly { get; private set; }
 
+    /// <summary>Whether the command makes a folder of records where there is none; a misspelt one must not pass for an empty catalogue.</summary>
+    public bool MakesRecords { get; private set; }
+
     /// <summary>Adds the options to a command that only reads a catalogue.</summary>
     public void AddTo(Command command)
     {
@@ -49,9 +52,11 @@ internal sealed class ServiceOptions
     }
 
     /// <summary>Adds the options to a command that changes or examines records: <c>--server</c> or <c>--data</c>.</summary>
-    public void AddRecordsTo(Command command)
+    /// <param name="command">Command.</param>
+    /// <param name="makes">Whether a folder that does not exist is made.</param>
+    public void AddRecordsTo(Command command, bool makes = false)
     {
-        RecordsOnly = true;
+        (RecordsOnly, MakesRecords) = (true, makes);
         command.Options.Add(Server);
         command.Options.Add(Data);
         command.Options.Add(Timeout);

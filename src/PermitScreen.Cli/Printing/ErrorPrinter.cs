@@ -39,7 +39,7 @@ internal static class ErrorPrinter
 
         return error.StatusCode switch
         {
-            StatusCode.NotFound or StatusCode.FailedPrecondition or StatusCode.InvalidArgument or StatusCode.AlreadyExists or StatusCode.OutOfRange => ExitCodes.BadInput,
+            StatusCode.NotFound or StatusCode.FailedPrecondition or StatusCode.InvalidArgument or StatusCode.AlreadyExists or StatusCode.OutOfRange or StatusCode.DataLoss => ExitCodes.BadInput,
 
             // Somebody else revised it meanwhile; the message names the newer revision.
             StatusCode.Aborted => ExitCodes.NotPassed,

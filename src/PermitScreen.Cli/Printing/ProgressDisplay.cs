@@ -34,7 +34,8 @@ internal static class ProgressDisplay
 
     private static Task<T> RunBarAsync<T>(string what, ProgressReport report, Func<ProgressReport, Task<T>> work)
     {
-        var console = AnsiConsole.Create(new AnsiConsoleSettings { Out = new AnsiConsoleOutput(Console.Error) });
+        // A terminal, as was seen above; by itself the console would ask the output, which may be a file.
+        var console = AnsiConsole.Create(new AnsiConsoleSettings { Out = new AnsiConsoleOutput(Console.Error), Interactive = InteractionSupport.Yes });
         report.Tell = console.WriteLine;
         return console.Progress()
             .Columns(new TaskDescriptionColumn(), new ProgressBarColumn(), new ProgressWordsColumn(report))

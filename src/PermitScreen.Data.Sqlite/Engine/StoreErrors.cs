@@ -8,6 +8,7 @@ namespace PermitScreen.Data.Sqlite.Engine;
 internal static class StoreErrors
 {
     private const int NoSpaceLeft = 28; // ENOSPC of POSIX
+    private const int ReadOnlyDevice = 30; // EROFS of POSIX
     private const int QuotaExceeded = 122; // EDQUOT of Linux
     private const int IoErrorNoMemory = raw.SQLITE_IOERR | (12 << 8);
     private const int IoErrorShortRead = raw.SQLITE_IOERR | (2 << 8);
@@ -88,6 +89,7 @@ internal static class StoreErrors
     private static StoreTrouble TroubleOf(IOException error) => (error.HResult & 0xFFFF) switch
     {
         NoSpaceLeft or QuotaExceeded => StoreTrouble.Full,
+        ReadOnlyDevice => StoreTrouble.NotAllowed,
         _ when error is DirectoryNotFoundException or FileNotFoundException or PathTooLongException => StoreTrouble.NotAllowed,
         _ => StoreTrouble.Device,
     };

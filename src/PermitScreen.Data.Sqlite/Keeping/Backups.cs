@@ -24,22 +24,24 @@ internal sealed class Backups(RecordsFile file)
         }
 
         var part = path + PartSuffix;
-        Remove(part);
         try
         {
+            Remove(part);
             Copy(part, cancellation);
             var stamp = Finish(part, cancellation);
             File.Move(part, path);
             ForceName(path);
             return stamp;
         }
-        catch (Exception error) when (StoreErrors.IsOfFile(error))
+        catch (Exception error)
         {
-            throw StoreErrors.Translate(error, path);
-        }
-        finally
-        {
-            Remove(part);
+            RemoveIfThere(part);
+            if (StoreErrors.IsOfFile(error))
+            {
+                throw StoreErrors.Translate(error, path);
+            }
+
+            throw;
         }
     }
 
@@ -106,6 +108,14 @@ internal sealed class Backups(RecordsFile file)
         foreach (var name in new[] { path, path + "-journal", path + "-wal", path + "-shm" })
         {
             File.Delete(name);
+        }
+    }
+
+    private static void RemoveIfThere(string path)
+    {
+        if (File.Exists(path))
+        {
+            Remove(path);
         }
     }
 

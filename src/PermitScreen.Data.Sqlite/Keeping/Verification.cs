@@ -29,9 +29,11 @@ internal sealed class Verification
         var log = new VerificationLog(database, tell, cancellation);
         var verification = new Verification(log);
         log.Stage("pages of the database", table: null, verification.Pages);
-        log.Stage("audit entries", "audit", () => AuditVerification.Run(log, knownHash));
+        log.Stage(VerificationStages.Audit, "audit", () => AuditVerification.Run(log, knownHash));
         log.Stage("contents", "contents", verification.Contents);
-        log.Stage("revisions", "revisions", verification.Revisions);
+        log.Stage("lines that contents need", "content_lines", verification.ContentLines);
+        log.Stage(VerificationStages.Revisions, "revisions", verification.Revisions);
+        log.Stage("resources", "resources", verification.Resources);
         log.Stage("catalogue versions", "change_sets", () => VersionVerification.Run(log));
         log.Stage("requests and backlog", table: null, verification.RequestsAndBacklog);
         log.Stage("imports", "imports", verification.Imports);
@@ -77,8 +79,9 @@ internal sealed class Verification
                 return (Hash: hash, Named: rows.Whole(2) == 1);
             },
             c => _log.Demand(c.Named, $"Content {c.Hash} is named by no revision and no staged item."));
-        _log.Each("content_lines", ContentRow.EveryLine, ContentRow.ReadLine, static _ => { });
     }
+
+    private void ContentLines() => _log.Each("content_lines", ContentRow.EveryLine, ContentRow.ReadLine, static _ => { });
 
     private void Revisions()
     {
@@ -98,14 +101,15 @@ internal sealed class Verification
                 resource.Add(head);
             });
         Resource([.. resource]);
-        _log.Each(
-            "resources",
-            ResourceRow.Every,
-            ResourceRow.Read,
-            r => _log.Demand(
-                _database.Whole("SELECT count(*) FROM revisions WHERE kind = $1 AND name = $2", (long)r.Kind, r.Name) == r.Revisions,
-                $"{r.Name} must have {r.Revisions} revisions and has another number."));
     }
+
+    private void Resources() => _log.Each(
+        "resources",
+        ResourceRow.Every,
+        ResourceRow.Read,
+        r => _log.Demand(
+            _database.Whole("SELECT count(*) FROM revisions WHERE kind = $1 AND name = $2", (long)r.Kind, r.Name) == r.Revisions,
+            $"{r.Name} must have {r.Revisions} revisions and has another number."));
 
     private void Resource(IReadOnlyList<RevisionHead> revisions)
     {

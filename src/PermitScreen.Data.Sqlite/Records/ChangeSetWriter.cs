@@ -73,7 +73,10 @@ internal static class ChangeSetWriter
                 RevisionRow.Insert(database, begun);
                 digest.AddBegun(begun);
                 new ResourceRow(change.Kind, change.Name, revisions + 1, version, NewestTo: null).Put(database);
-                foreach (var line in ContentRow.LinesOf(database, begun.Content))
+
+                // Lines that the revision before needed too were asked for with it: they are kept, or on the backlog still.
+                var asked = change.Ended is null ? [] : ContentRow.LinesOf(database, change.Ended.Content);
+                foreach (var line in ContentRow.LinesOf(database, begun.Content).Except(asked))
                 {
                     BacklogRow.Ask(database, new PendingLines(line, change.Name, begun.Content, Instants.Kept(provenance.Instant), Failure: null));
                 }

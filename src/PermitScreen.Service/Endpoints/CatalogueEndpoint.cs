@@ -68,12 +68,12 @@ public sealed class CatalogueEndpoint(ICatalogue catalogue, StructureChanges cha
         var found = new Door(new LineLibrary(null)).Prepared(request.Structure, faults);
         context.CancellationToken.ThrowIfCancellationRequested();
         response.Faults.AddRange(faults.All.Select(ReasonWriter.Write));
-        if (found is { } passed)
+        if (found is { } prepared)
         {
             var snapshot = await catalogue.CurrentAsync(null, context.CancellationToken);
             var policies = snapshot.Policies.Values.Select(p => p.Document).OfType<Rating.Policies.PolicyDocument>();
-            response.Gaps.AddRange(StructureGaps.Of(passed.Prepared).Concat(StructureGaps.Under(policies, passed.Prepared)).Select(ReasonWriter.WriteGap));
-            response.EffectCount = passed.Prepared.Lines.Length;
+            response.Gaps.AddRange(StructureGaps.Of(prepared).Concat(StructureGaps.Under(policies, prepared)).Select(ReasonWriter.WriteGap));
+            response.EffectCount = prepared.Lines.Length;
         }
 
         return response;

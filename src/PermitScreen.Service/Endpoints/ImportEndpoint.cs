@@ -81,7 +81,7 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
         }
 
         Refuse(faults);
-        var piece = _checks.Check(index, CanonicalForm.Fingerprint("StageImportPiece", request), request.Structures, request.Policies, request.Origins, context.CancellationToken);
+        var piece = _checks.Check(index, CanonicalForm.Fingerprint(request), request.Structures, request.Policies, request.Origins, context.CancellationToken);
         var (outcome, head) = await _imports.StageAsync(ImportWriter.Id(request.Name), piece, context.CancellationToken);
         switch (outcome)
         {

@@ -17,6 +17,7 @@ namespace PermitScreen.Service.Endpoints;
 public sealed class MaintenanceEndpoint : MaintenanceService.MaintenanceServiceBase
 {
     private const int FailuresTold = 100;
+    private const int EntriesAtOnce = 100;
     private const int ChunkBytes = 256 * 1024;
     private readonly RecordsPlace _place;
     private readonly IRecordKeeping _keeping;
@@ -69,10 +70,10 @@ public sealed class MaintenanceEndpoint : MaintenanceService.MaintenanceServiceB
         try
         {
             var stamp = await _keeping.BackUpAsync(path, context.CancellationToken);
-            var newest = await _store.ReadAuditAsync(null, 1, context.CancellationToken);
+            var newest = await HashOfAsync(stamp.Version, context.CancellationToken);
             await using var file = File.OpenRead(path);
             await responseStream.WriteAsync(
-                new ReadBackupResponse { Head = new BackupHead { SizeBytes = file.Length, CatalogueVersion = stamp.Version, NewestHash = newest[0].Hash.ToString() } }, context.CancellationToken);
+                new ReadBackupResponse { Head = new BackupHead { SizeBytes = file.Length, CatalogueVersion = stamp.Version, VersionHash = newest } }, context.CancellationToken);
             using var hash = IncrementalHash.CreateHash(HashAlgorithmName.SHA256);
             var buffer = new byte[ChunkBytes];
             for (int read; (read = await file.ReadAsync(buffer, context.CancellationToken)) > 0;)
@@ -116,6 +117,11 @@ public sealed class MaintenanceEndpoint : MaintenanceService.MaintenanceServiceB
 
             return await _restoring.RunAsync(path, provenance, context.CancellationToken);
         }
+        catch (StoreException error) when (error.Message.Contains(path, StringComparison.Ordinal))
+        {
+            // The caller knows the backup, not the name under which it was received.
+            throw new StoreException(error.Trouble, error.Message.Replace(path, "the backup", StringComparison.Ordinal), error);
+        }
         finally
         {
             File.Delete(path);
@@ -148,6 +154,27 @@ public sealed class MaintenanceEndpoint : MaintenanceService.MaintenanceServiceB
         }
 
         throw BadRequests.Of("sha256", "Missing; the last message holds the SHA-256 over all bytes. Nothing was changed.");
+    }
+
+    /// <summary>Hash of the audit entry that made a version; others may have written since the copy was made.</summary>
+    private async Task<string> HashOfAsync(long version, CancellationToken cancellation)
+    {
+        for (long? before = null; ;)
+        {
+            var entries = await _store.ReadAuditAsync(before, EntriesAtOnce, cancellation);
+            if (entries.FirstOrDefault(e => e.Version == version) is { } made)
+            {
+                return made.Hash.ToString();
+            }
+
+            if (entries.Count < EntriesAtOnce)
+            {
+                // Version 0 was made by no change set; the first entry of all stands for it.
+                return entries[^1].Hash.ToString();
+            }
+
+            before = entries[^1].Sequence;
+        }
     }
 
     private void Caller(ServerCallContext context)

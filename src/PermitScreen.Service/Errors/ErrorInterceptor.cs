@@ -54,7 +54,7 @@ public sealed partial class ErrorInterceptor(ILogger<ErrorInterceptor> logger) :
         }
         catch (StoreException error)
         {
-            LogRecords(logger, error, context.Method, error.Message);
+            LogRecords(logger, context.Method, error.Trouble, error.Message);
             throw new RpcException(new Status(CodeOf(error.Trouble), $"{error.Message} Nothing was changed, and no verdict was given."));
         }
 #pragma warning disable CA1031 // The last line of defence: nothing of the inside may leak, and every failure must be found again in the log.
@@ -78,8 +78,8 @@ public sealed partial class ErrorInterceptor(ILogger<ErrorInterceptor> logger) :
     [LoggerMessage(EventId = 500, Level = LogLevel.Error, Message = "{Method} failed; error id {Id}")]
     private static partial void LogInternal(ILogger logger, Exception error, string method, string id);
 
-    [LoggerMessage(EventId = 501, Level = LogLevel.Error, Message = "{Method}: trouble with the records. {Reason}")]
-    private static partial void LogRecords(ILogger logger, Exception error, string method, string reason);
+    [LoggerMessage(EventId = 501, Level = LogLevel.Error, Message = "{Method}: trouble with the records ({Trouble}). {Reason}")]
+    private static partial void LogRecords(ILogger logger, string method, StoreTrouble trouble, string reason);
 
     [LoggerMessage(EventId = 502, Level = LogLevel.Warning, Message = "{Method} was not answered. {Reason}")]
     private static partial void LogUnavailable(ILogger logger, string method, string reason);

@@ -18,7 +18,8 @@ internal static class StructureMapper
     /// <summary>The record, or null with faults.</summary>
     /// <param name="structure">Structure of the contract.</param>
     /// <param name="faults">Takes every fault.</param>
-    public static StructureRecord? Map(C.Structure structure, FaultList faults)
+    /// <param name="etag">Its etag, where it is known already.</param>
+    public static StructureRecord? Map(C.Structure structure, FaultList faults, string? etag = null)
     {
         var before = faults.Count;
         var gaps = new List<Reason>();
@@ -65,7 +66,7 @@ internal static class StructureMapper
             HasOverride = structure.EngineerOverride is not null,
             Units = units.ToImmutable(),
             Gaps = [.. gaps],
-            Etag = Etag(structure),
+            Etag = etag ?? Etag(structure),
         };
         return faults.Count > before ? null : record;
     }

@@ -22,12 +22,10 @@ internal sealed partial class ChangeDesk(ICatalogueStore store, CatalogueGate ca
         var name = request.Edit.Name;
         switch (await store.CommitAsync(request, cancellation))
         {
+            case ChangeOutcome.Done { Repeated: false } done:
+                await WarmAsync();
+                return (Made(request, done.Version), done.Version);
             case ChangeOutcome.Done done:
-                if (!done.Repeated)
-                {
-                    await WarmAsync();
-                }
-
                 return (done.Content is null ? null : await store.FindAsync(kind, name, done.Version, CancellationToken.None), done.Version);
             case ChangeOutcome.Unchanged unchanged:
                 return (await store.FindAsync(kind, name, unchanged.Version, CancellationToken.None), unchanged.Version);
@@ -55,6 +53,17 @@ internal sealed partial class ChangeDesk(ICatalogueStore store, CatalogueGate ca
             LogNotWarmed(logger, error.Message);
         }
     }
+
+    /// <summary>The revision that a request has just made; null where it took the resource out.</summary>
+    private static StoredRevision? Made(ChangeRequest request, long version) =>
+        (request.Edit switch
+        {
+            Edit.Add add => add.Content,
+            Edit.Revise revise => revise.Content,
+            _ => null,
+        }) is { } content
+            ? new StoredRevision(new RevisionHead(content.Kind, content.Name, version, null, content.Hash, request.Provenance), content.Bytes)
+            : null;
 
     private static string Type(ResourceKind kind) => kind == ResourceKind.Structure ? "permitscreen.dev/Structure" : "permitscreen.dev/Policy";
 

@@ -1,4 +1,5 @@
 using PermitScreen.Catalogue.Lines;
+using PermitScreen.Catalogue.Records;
 using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Catalogue.Storage;
 using PermitScreen.Contracts.V1;
@@ -14,28 +15,30 @@ namespace PermitScreen.Service.Revisions;
 internal sealed class Door(ILineSource lines)
 {
     /// <summary>A structure ready to be kept, or null with every fault.</summary>
-    public ResourceContent? Structure(Structure structure, FaultList faults) => Prepared(structure, faults)?.Content;
+    public ResourceContent? Structure(Structure structure, FaultList faults) => Checked(structure, faults)?.Content;
 
-    /// <summary>A structure ready to be kept and to be screened, or null with every fault.</summary>
-    public (ResourceContent Content, PreparedStructure Prepared)? Prepared(Structure structure, FaultList faults)
+    /// <summary>A structure ready to be screened, or null with every fault.</summary>
+    public PreparedStructure? Prepared(Structure structure, FaultList faults) =>
+        Checked(structure, faults) is { } passed ? StructurePreparation.Prepare(passed.Record, lines, faults) : null;
+
+    private (ResourceContent Content, StructureRecord Record)? Checked(Structure structure, FaultList faults)
     {
         var before = faults.Count;
-        CanonicalForm.RequireKnown(Contracts.V1.Structure.Parser, structure, faults);
-        if (StructureMapper.Map(structure, faults) is not { } record || faults.Count > before || StructurePreparation.Prepare(record, lines, faults) is not { } prepared)
-        {
-            return null;
-        }
-
-        return (new ResourceContent(ResourceKind.Structure, record.Name, CanonicalForm.Of(structure), TrussKeys.Of(record)), prepared);
+        var bytes = CanonicalForm.Of(structure);
+        CanonicalForm.RequireKnown(Contracts.V1.Structure.Parser, bytes, faults);
+        return StructureMapper.Map(structure, faults, Digest.Of(bytes).Etag) is { } record && faults.Count == before && StructurePreparation.HasLines(record, lines, faults)
+            ? (new ResourceContent(ResourceKind.Structure, record.Name, bytes, TrussKeys.Of(record)), record)
+            : null;
     }
 
     /// <summary>A policy document ready to be kept, or null with every fault.</summary>
     public static (ResourceContent Content, PolicyDocument Document)? Policy(Policy policy, FaultList faults)
     {
         var before = faults.Count;
-        CanonicalForm.RequireKnown(Contracts.V1.Policy.Parser, policy, faults);
+        var bytes = CanonicalForm.Of(policy);
+        CanonicalForm.RequireKnown(Contracts.V1.Policy.Parser, bytes, faults);
         return PolicyMapper.Map(policy, faults) is { } document && faults.Count == before
-            ? (new ResourceContent(ResourceKind.Policy, CanonicalForm.DocumentName(policy), CanonicalForm.Of(policy), []), document)
+            ? (new ResourceContent(ResourceKind.Policy, CanonicalForm.DocumentName(policy), bytes, []), document)
             : null;
     }
 }

@@ -24,7 +24,7 @@ public sealed class PolicyChanges
     internal async Task<Policy> CreateAsync(CreatePolicyRequest request, ServerCallContext context)
     {
         var faults = new FaultList();
-        var (provenance, stamp) = Caller("CreatePolicy", new CreatePolicyRequest(request) { RequestId = "" }, request.ChangeReason, request.RequestId, context, faults);
+        var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
         var content = Draft(request.Policy, faults);
         if (content is not null)
         {
@@ -45,7 +45,7 @@ public sealed class PolicyChanges
     internal async Task<Policy> UpdateAsync(UpdatePolicyRequest request, ServerCallContext context)
     {
         var faults = new FaultList();
-        var (provenance, stamp) = Caller("UpdatePolicy", new UpdatePolicyRequest(request) { RequestId = "" }, request.ChangeReason, request.RequestId, context, faults);
+        var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
         var content = Draft(request.Policy, faults);
         RequireEtag(faults, "policy.etag", request.Policy?.Etag ?? "");
         if (content is not null && !faults.Any)
@@ -59,7 +59,7 @@ public sealed class PolicyChanges
     internal Task<Policy> ConfirmAsync(ConfirmPolicyRequest request, ServerCallContext context)
     {
         var faults = new FaultList();
-        var (provenance, stamp) = Caller("ConfirmPolicy", new ConfirmPolicyRequest(request) { RequestId = "" }, request.ChangeReason, request.RequestId, context, faults);
+        var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
         if (request.Confirmation is null)
         {
             faults.Add("confirmation", "Missing; name the person who confirmed the numbers, the day, and the decision.");
@@ -75,7 +75,7 @@ public sealed class PolicyChanges
     internal Task<Policy> EnactAsync(EnactPolicyRequest request, ServerCallContext context)
     {
         var faults = new FaultList();
-        var (provenance, stamp) = Caller("EnactPolicy", new EnactPolicyRequest(request) { RequestId = "" }, request.ChangeReason, request.RequestId, context, faults);
+        var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
         if (request.InForceFrom is null)
         {
             faults.Add("in_force_from", "Missing; give the first day in force.");
@@ -98,7 +98,7 @@ public sealed class PolicyChanges
     internal Task<Policy> WithdrawAsync(WithdrawPolicyRequest request, ServerCallContext context)
     {
         var faults = new FaultList();
-        var (provenance, stamp) = Caller("WithdrawPolicy", new WithdrawPolicyRequest(request) { RequestId = "" }, request.ChangeReason, request.RequestId, context, faults);
+        var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
         return StepAsync("withdraw policy", request.Name, request.Etag, faults, provenance, stamp, context, policy =>
         {
             RequireState(policy, "withdrawn again", PolicyState.Draft, PolicyState.InForce);
@@ -145,8 +145,8 @@ public sealed class PolicyChanges
         return Door.Policy(new Policy(policy) { State = PolicyState.Draft }, at)?.Content;
     }
 
-    private (Provenance Provenance, RequestStamp? Stamp) Caller(string method, IMessage withoutId, string reason, string requestId, ServerCallContext context, FaultList faults) =>
-        (_caller.Read(context, reason, faults), ChangeCaller.Stamp(requestId, CanonicalForm.Fingerprint(method, withoutId), faults));
+    private (Provenance Provenance, RequestStamp? Stamp) Caller(IMessage request, string reason, string requestId, ServerCallContext context, FaultList faults) =>
+        (_caller.Read(context, reason, faults), ChangeCaller.Stamp(requestId, CanonicalForm.Fingerprint(request), faults));
 
     private async Task<Policy> NewestAsync(string name, CancellationToken cancellation)
     {

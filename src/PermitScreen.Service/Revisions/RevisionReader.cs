@@ -20,7 +20,7 @@ internal sealed class RevisionReader(ILineSource lines) : IRevisionReader
     {
         var faults = new FaultList();
         var structure = CanonicalForm.Structure(revision);
-        return StructureMapper.Map(structure, faults) is { } record && StructurePreparation.Prepare(record, lines, faults) is { } prepared
+        return StructureMapper.Map(structure, faults, structure.Etag) is { } record && StructurePreparation.Prepare(record, lines, faults) is { } prepared
             ? prepared
             : Unreadable(structure, faults);
     }
@@ -30,7 +30,7 @@ internal sealed class RevisionReader(ILineSource lines) : IRevisionReader
 
     /// <summary>The record of a structure without its lines; null where this version cannot read it.</summary>
     /// <param name="revision">Revision.</param>
-    public static StructureRecord? ReadRecord(StoredRevision revision) => StructureMapper.Map(CanonicalForm.Structure(revision), new FaultList());
+    public static StructureRecord? ReadRecord(StoredRevision revision) => StructureMapper.Map(CanonicalForm.Structure(revision), new FaultList(), revision.Head.Content.Etag);
 
     /// <summary>It was sound when it was kept; this version asks for more. It is not assessed, and says why.</summary>
     private static PreparedStructure Unreadable(Contracts.V1.Structure structure, FaultList faults)

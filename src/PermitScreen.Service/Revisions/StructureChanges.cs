@@ -23,7 +23,7 @@ public sealed class StructureChanges
     {
         var faults = new FaultList();
         var provenance = _caller.Read(context, request.ChangeReason, faults);
-        var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint("CreateStructure", new CreateStructureRequest(request) { RequestId = "" }), faults);
+        var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint(request), faults);
         var structure = Named(request, faults);
         var content = structure is null ? null : _door.Structure(structure, faults.Under("structure"));
         if (faults.Any || content is null)
@@ -47,7 +47,7 @@ public sealed class StructureChanges
     {
         var faults = new FaultList();
         var provenance = _caller.Read(context, request.ChangeReason, faults);
-        var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint("UpdateStructure", new UpdateStructureRequest(request) { RequestId = "" }), faults);
+        var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint(request), faults);
         if (request.Structure is null)
         {
             faults.Add("structure", "Missing; give the structure as it is to be.");
@@ -93,7 +93,7 @@ public sealed class StructureChanges
     {
         var faults = new FaultList();
         var provenance = _caller.Read(context, request.ChangeReason, faults);
-        var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint("DeleteStructure", new DeleteStructureRequest(request) { RequestId = "" }), faults);
+        var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint(request), faults);
         Names.Structure(faults, "name", request.Name);
         RequireEtag(faults, "etag", request.Etag);
         if (faults.Any)

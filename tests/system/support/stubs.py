@@ -41,9 +41,15 @@ import grpc  # noqa: E402
 from google.protobuf import json_format  # noqa: E402
 from google.rpc import error_details_pb2, status_pb2  # noqa: E402
 from permitscreen.v1 import catalogue_service_pb2 as catalogue  # noqa: E402,F401
-from permitscreen.v1 import catalogue_service_pb2_grpc, policy_service_pb2_grpc, screening_service_pb2_grpc  # noqa: E402
+from permitscreen.v1 import catalogue_service_pb2_grpc, history_service_pb2_grpc, import_service_pb2_grpc  # noqa: E402
+from permitscreen.v1 import history_service_pb2 as history  # noqa: E402,F401
+from permitscreen.v1 import import_service_pb2 as imports  # noqa: E402,F401
+from permitscreen.v1 import maintenance_service_pb2 as maintenance  # noqa: E402,F401
+from permitscreen.v1 import maintenance_service_pb2_grpc, policy_service_pb2_grpc, screening_service_pb2_grpc  # noqa: E402
 from permitscreen.v1 import policy_service_pb2 as policy  # noqa: E402,F401
 from permitscreen.v1 import screening_service_pb2 as screening  # noqa: E402
+from permitscreen.v1.policy_pb2 import Policy  # noqa: E402,F401
+from permitscreen.v1.structure_pb2 import Structure  # noqa: E402,F401
 
 
 class Service:
@@ -54,6 +60,9 @@ class Service:
         self.catalogue = catalogue_service_pb2_grpc.CatalogueServiceStub(self.channel)
         self.policies = policy_service_pb2_grpc.PolicyServiceStub(self.channel)
         self.screening = screening_service_pb2_grpc.ScreeningServiceStub(self.channel)
+        self.imports = import_service_pb2_grpc.ImportServiceStub(self.channel)
+        self.history = history_service_pb2_grpc.HistoryServiceStub(self.channel)
+        self.maintenance = maintenance_service_pb2_grpc.MaintenanceServiceStub(self.channel)
         # grpc.health.v1.Health/Check with an empty request; its answer is one field, the status: 1 SERVING, 2 NOT_SERVING.
         self._health = self.channel.unary_unary("/grpc.health.v1.Health/Check")
 
@@ -81,6 +90,16 @@ def request(application, policy_name, as_of, **more):
 
 def as_json(message):
     return json_format.MessageToDict(message)
+
+
+def from_json(value, message):
+    """A message from the contract's JSON."""
+    return json_format.ParseDict(value, message)
+
+
+def writing(actor):
+    """Metadata of a call that changes records: who makes the change."""
+    return (("x-permitscreen-actor", actor),)
 
 
 def refused(call):
