@@ -12,6 +12,9 @@ public sealed class SqliteRecords : IAsyncDisposable
 {
     private const string SegmentName = "catalogue.segment";
 
+    /// <summary>What a process may have left behind that ended while it made, received or checked a backup.</summary>
+    private static readonly string[] Leftovers = ["backup-*.tmp*", "restore-*.tmp*", Backups.CheckingName + "*"];
+
     private readonly SqliteSettings _settings;
     private readonly FolderLock _lock;
     private readonly RecordsFile _file;
@@ -49,6 +52,12 @@ public sealed class SqliteRecords : IAsyncDisposable
 
     /// <summary>Whether the file of the lines was missing, damaged or of another schema, so that it was made anew; what was there is kept beside it.</summary>
     public bool LinesWereLost => _lines.WereLost;
+
+    /// <summary>
+    /// Identity of the file of the lines, made at random with it: another one than before says that the lines were lost. It is current also where
+    /// the file was replaced while this was running; empty while there is no file because a replacement failed.
+    /// </summary>
+    public string LinesId => _lines.Id;
 
     /// <summary>File of the records, for tests of what happens to it.</summary>
     internal RecordsFile File => _file;
@@ -94,6 +103,10 @@ public sealed class SqliteRecords : IAsyncDisposable
         try
         {
             Backups.Remove(Path.Combine(folder, Restore.ReadyName));
+            foreach (var file in Leftovers.SelectMany(pattern => Directory.GetFiles(folder, pattern)))
+            {
+                System.IO.File.Delete(file);
+            }
         }
         catch (Exception error) when (StoreErrors.IsOfFile(error))
         {

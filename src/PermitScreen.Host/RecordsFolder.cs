@@ -31,6 +31,6 @@ internal static class RecordsFolder
         services.AddSingleton(s => s.GetRequiredService<SqliteRecords>().Backlog);
         services.AddSingleton(s => s.GetRequiredService<SqliteRecords>().Lines);
         services.AddSingleton(s => s.GetRequiredService<SqliteRecords>().Keeping);
-        return new RecordsPlace(Path.GetDirectoryName(records.SegmentPath)!, settings.DataFolder is null ? null : records.SegmentPath, records.LinesWereLost, settings.DataFolder is null);
+        return new RecordsPlace(Path.GetDirectoryName(records.SegmentPath)!, settings.DataFolder is null ? null : records.SegmentPath, () => records.LinesId, settings.DataFolder is null);
     }
 }

@@ -98,7 +98,7 @@ public static partial class ServiceRegistration
         services.AddSingleton(s => new StructureChanges(s.GetRequiredService<ICatalogue>(), s.GetRequiredService<ChangeDesk>(), s.GetRequiredService<Door>(), s.GetRequiredService<ChangeCaller>()));
         services.AddSingleton(s => new PolicyChanges(s.GetRequiredService<ICatalogue>(), s.GetRequiredService<ChangeDesk>(), s.GetRequiredService<ChangeCaller>()));
         services.AddSingleton(s => new ImportEndpoint(
-            s.GetRequiredService<IImportStore>(), s.GetRequiredService<ICatalogueStore>(), s.GetRequiredService<ImportChecks>(), s.GetRequiredService<ChangeDesk>(), s.GetRequiredService<ChangeCaller>()));
+            s.GetRequiredService<IImportStore>(), s.GetRequiredService<ICatalogueStore>(), s.GetRequiredService<ICatalogue>(), s.GetRequiredService<ImportChecks>(), s.GetRequiredService<ChangeDesk>(), s.GetRequiredService<ChangeCaller>()));
         services.AddSingleton(s => new HistoryEndpoint(s.GetRequiredService<ICatalogueStore>(), s.GetRequiredService<RecordsVerification>()));
         services.AddSingleton(s => new MaintenanceEndpoint(
             s.GetRequiredService<RecordsPlace>(),

@@ -118,7 +118,10 @@ internal sealed class SnapshotReader(ICatalogueStore store, IRevisionReader read
             }
         }
 
-        return CatalogueSnapshot.Of(stamp, entries, documents);
+        // Each was read by itself: between two of them the records may have been replaced.
+        return await store.FindVersionAsync(stamp.Version, cancellation) == stamp
+            ? CatalogueSnapshot.Of(stamp, entries, documents)
+            : throw new CatalogueUnavailableException("The records were replaced while they were read; ask again.");
     }
 
     private async Task<CatalogueSnapshot> ReadWholeAsync(

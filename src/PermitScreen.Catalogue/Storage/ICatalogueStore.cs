@@ -51,6 +51,11 @@ public interface ICatalogueStore
     /// <param name="cancellation">Ends the wait.</param>
     Task<IReadOnlyList<AuditEntry>> ReadAuditAsync(long? before, int most, CancellationToken cancellation);
 
+    /// <summary>What was answered to a request before: done, or its id used for another one; null where it was not seen yet.</summary>
+    /// <param name="stamp">Stamp of the request.</param>
+    /// <param name="cancellation">Ends the wait.</param>
+    Task<ChangeOutcome?> FindRequestAsync(RequestStamp stamp, CancellationToken cancellation);
+
     /// <summary>Makes a change: version, revision, audit entry, backlog and the request's outcome in one transaction, or nothing.</summary>
     /// <param name="request">Change.</param>
     /// <param name="cancellation">Ends the wait for other writers; a change that has begun is finished.</param>

@@ -20,7 +20,7 @@ internal static class DemoCommand
             var application = ApplicationInput.Read(Path.Combine(DemoFolder.Find(), "applications", "01-reactor-vessel-13-axles.json"));
             await using var connection = await ServiceConnection.StartAsync(ServiceConnection.SourceOf([], []), Ports.Checked(parsed.GetValue(port)), Timeout, cancellation);
             var asOf = new Google.Type.Date { Year = DemoFolder.Today.Year, Month = DemoFolder.Today.Month, Day = DemoFolder.Today.Day };
-            var screening = await ScreenCommand.RunAsync(connection, application, DemoFolder.PolicyName, asOf, full: true, cancellation);
+            var screening = await ScreenCommand.RunAsync(connection, application, DemoFolder.PolicyName, asOf, version: null, full: true, cancellation);
             new ScreeningPrinter(Consoles.Create(), screening, application.Title, arithmetic: true).Print();
             if (parsed.GetValue(once))
             {

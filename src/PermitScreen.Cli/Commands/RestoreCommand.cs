@@ -36,6 +36,11 @@ internal static class RestoreCommand
             var head = new RestoreHead { ChangeReason = validateOnly ? "check only" : writing.Reason(parsed), ValidateOnly = validateOnly };
             var author = writing.Author(parsed);
             await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
+            if (!validateOnly && await NewestAsync(connection, cancellation) is { } newest)
+            {
+                head.ReplacedVersion = newest;
+            }
+
             var answer = await SendAsync(connection, path, head, author, cancellation);
             Console.Out.WriteLine(validateOnly
                 ? FormattableString.Invariant($"{path} is sound and holds catalogue version {answer.RestoredVersion}. Nothing was replaced.")
@@ -43,6 +48,19 @@ internal static class RestoreCommand
             return ExitCodes.Passed;
         });
         return command;
+    }
+
+    /// <summary>The version that is to be replaced, so that nobody else's change goes with it; null where the records are so damaged that there is none.</summary>
+    private static async Task<long?> NewestAsync(ServiceConnection connection, CancellationToken cancellation)
+    {
+        try
+        {
+            return (await connection.Maintenance.GetBacklogAsync(new GetBacklogRequest(), connection.Call(cancellation))).Backlog.CatalogueVersion;
+        }
+        catch (RpcException error) when (error.StatusCode is StatusCode.DataLoss or StatusCode.Unavailable)
+        {
+            return null;
+        }
     }
 
     private static async Task<RestoreBackupResponse> SendAsync(ServiceConnection connection, string path, RestoreHead head, Author author, CancellationToken cancellation)

@@ -16,8 +16,9 @@ internal static class ScreenCommand
         var asOf = new Option<string?>("--as-of") { Description = "Civil date for which standing and policy are read, 2026-12-01; today where left out." };
         var arithmetic = new Option<bool>("--arithmetic") { Description = "Print every rung and the arithmetic of the governing effect." };
         var json = new Option<bool>("--json") { Description = "Print the whole answer as JSON, for scripts." };
+        var version = VersionOptions.AsOf();
         var service = new ServiceOptions();
-        var command = new Command("screen", "Screen an application over its route.") { file, policy, asOf, arithmetic, json };
+        var command = new Command("screen", "Screen an application over its route.") { file, policy, asOf, version, arithmetic, json };
         service.AddTo(command);
         command.SetAction(async (parsed, cancellation) =>
         {
@@ -26,7 +27,7 @@ internal static class ScreenCommand
             await using var connection = await ServiceConnection.OpenAsync(service, parsed, cancellation);
             var name = parsed.GetValue(policy) ?? await OnlyPolicyAsync(connection, cancellation);
             var full = parsed.GetValue(json) || parsed.GetValue(arithmetic);
-            var screening = await RunAsync(connection, application, name, date, full, cancellation);
+            var screening = await RunAsync(connection, application, name, date, VersionOptions.Checked(version, parsed), full, cancellation);
             if (parsed.GetValue(json))
             {
                 Console.Out.WriteLine(new JsonFormatter(JsonFormatter.Settings.Default.WithIndentation()).Format(screening));
@@ -43,7 +44,7 @@ internal static class ScreenCommand
 
     /// <summary>Screens over gRPC.</summary>
     public static async Task<Contracts.V1.Screening> RunAsync(
-        ServiceConnection connection, Application application, string policy, Google.Type.Date? asOf, bool full, CancellationToken cancellation)
+        ServiceConnection connection, Application application, string policy, Google.Type.Date? asOf, long? version, bool full, CancellationToken cancellation)
     {
         var request = new ScreenApplicationRequest
         {
@@ -52,6 +53,11 @@ internal static class ScreenCommand
             AsOfDate = asOf,
             View = full ? ScreeningView.Full : ScreeningView.Basic,
         };
+        if (version is { } exact)
+        {
+            request.AsOfVersion = exact;
+        }
+
         return (await connection.Screening.ScreenApplicationAsync(request, connection.Call(cancellation))).Screening;
     }
 

@@ -138,8 +138,17 @@ internal sealed class Database : IDisposable
         return command;
     }
 
+    /// <exception cref="InvalidOperationException">A text holds the character U+0000; callers refuse such text before they come here.</exception>
     private SqliteCommand Statement(string sql, ReadOnlySpan<object?> values)
     {
+        foreach (var value in values)
+        {
+            if (value is string text && text.Contains('\0', StringComparison.Ordinal))
+            {
+                throw new InvalidOperationException("A text for the database holds the character U+0000, at which SQLite's functions end it. Nothing was written.");
+            }
+        }
+
         if (!_statements.TryGetValue(sql, out var command))
         {
             command = Command(sql);

@@ -1,5 +1,6 @@
 using Microsoft.Data.Sqlite;
 using PermitScreen.Catalogue.Storage;
+using PermitScreen.Data.Sqlite.Records;
 using SQLitePCL;
 
 namespace PermitScreen.Data.Sqlite.Engine;
@@ -60,7 +61,9 @@ internal static class StoreErrors
     {
         StoreTrouble.Locked => "Stop the other process, or speak to it with --server.",
         StoreTrouble.Full => "Make room and try again; the service need not be started anew.",
-        StoreTrouble.Damaged => "Verify the records, and restore the newest sound backup.",
+        StoreTrouble.Damaged =>
+            "Verify the records, and restore the newest sound backup. Where the records cannot be opened, put the backup in their place: " +
+            $"move {RecordsFile.FileName}, {RecordsFile.FileName}-wal and {RecordsFile.FileName}-shm away and copy the backup to {RecordsFile.FileName}.",
         StoreTrouble.NewerSchema => "Use that version, or a backup made before it.",
         StoreTrouble.NotAllowed => "Give the account that runs PermitScreen the right to read and write the folder and its files.",
         StoreTrouble.Device => "Check the device, and restore the newest sound backup on another one if need be.",

@@ -10,6 +10,7 @@ internal sealed class Writer(Func<Database> open, IStoreProbe? probe) : IDisposa
 {
     private readonly SemaphoreSlim _gate = new(1, 1);
     private Database? _database = open();
+    private bool _closed;
 
     /// <summary>Does a piece of work in one transaction.</summary>
     /// <param name="what">What is done, for the probe.</param>
@@ -27,6 +28,7 @@ internal sealed class Writer(Func<Database> open, IStoreProbe? probe) : IDisposa
         await _gate.WaitAsync(cancellation);
         try
         {
+            ObjectDisposedException.ThrowIf(_closed, this);
             _database ??= open();
             return _database.Guarded(work);
         }
@@ -40,8 +42,11 @@ internal sealed class Writer(Func<Database> open, IStoreProbe? probe) : IDisposa
     /// <inheritdoc/>
     public void Dispose()
     {
-        _database?.Dispose();
-        _gate.Dispose();
+        // A write that is running is finished first. Whoever waits behind it is turned away one after the other, and needs the gate for that.
+        _gate.Wait();
+        _closed = true;
+        Close();
+        _gate.Release();
     }
 
     private T InTransaction<T>(Database database, string what, Func<Database, (T Result, bool Keep)> work)

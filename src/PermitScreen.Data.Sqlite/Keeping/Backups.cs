@@ -11,39 +11,20 @@ namespace PermitScreen.Data.Sqlite.Keeping;
 /// <param name="file">Records.</param>
 internal sealed class Backups(RecordsFile file)
 {
+    /// <summary>Copy that is checked; one that a process left behind is removed when the records are opened.</summary>
+    public const string CheckingName = "catalogue.checking";
+
     private const string PartSuffix = ".part";
 
     /// <summary>Makes a backup; it is checked before it gets its name.</summary>
     /// <param name="path">File to be made.</param>
     /// <param name="cancellation">Ends the copying.</param>
-    public VersionStamp Make(string path, CancellationToken cancellation)
-    {
-        if (File.Exists(path))
-        {
-            throw new StoreException(StoreTrouble.NotAllowed, $"{path} is there already and was not overwritten. Choose another name for the backup.");
-        }
+    public VersionStamp Make(string path, CancellationToken cancellation) => Write(path, part => Finish(part, cancellation), cancellation);
 
-        var part = path + PartSuffix;
-        try
-        {
-            Remove(part);
-            Copy(part, cancellation);
-            var stamp = Finish(part, cancellation);
-            File.Move(part, path);
-            ForceName(path);
-            return stamp;
-        }
-        catch (Exception error)
-        {
-            RemoveIfThere(part);
-            if (StoreErrors.IsOfFile(error))
-            {
-                throw StoreErrors.Translate(error, path);
-            }
-
-            throw;
-        }
-    }
+    /// <summary>Copies the records page by page as they are, damaged ones too: what a restore replaces must be kept even where it is no sound backup.</summary>
+    /// <param name="path">File to be made.</param>
+    /// <returns>Whether what was copied is sound.</returns>
+    public bool Keep(string path) => Write(path, FinishAsItIs, CancellationToken.None);
 
     /// <summary>Checks a backup.</summary>
     /// <param name="path">File.</param>
@@ -62,7 +43,7 @@ internal sealed class Backups(RecordsFile file)
         }
 
         // One of an older schema is read as it would be after a restore.
-        var copy = Path.Combine(file.Settings.Folder, "catalogue.checking");
+        var copy = Path.Combine(file.Settings.Folder, CheckingName);
         try
         {
             using var database = OpenCopy(path, copy);
@@ -139,12 +120,41 @@ internal sealed class Backups(RecordsFile file)
         }
     }
 
+    private T Write<T>(string path, Func<string, T> finish, CancellationToken cancellation)
+    {
+        if (File.Exists(path))
+        {
+            throw new StoreException(StoreTrouble.NotAllowed, $"{path} is there already and was not overwritten. Choose another name for the backup.");
+        }
+
+        var part = path + PartSuffix;
+        try
+        {
+            Remove(part);
+            Copy(part, cancellation);
+            var result = finish(part);
+            File.Move(part, path);
+            ForceName(path);
+            return result;
+        }
+        catch (Exception error)
+        {
+            RemoveIfThere(part);
+            if (StoreErrors.IsOfFile(error))
+            {
+                throw StoreErrors.Translate(error, path);
+            }
+
+            throw;
+        }
+    }
+
     private void Copy(string part, CancellationToken cancellation)
     {
         using var lease = file.Readers.Rent();
 
-        // The first read fixes the instant; writers go on beside it.
-        lease.Database.Guarded(VersionRow.Read);
+        // The first read fixes the instant; writers go on beside it. It reads the schema only, so that damaged records can be copied.
+        lease.Database.Guarded(d => d.Whole("SELECT count(*) FROM sqlite_schema"));
         using (var target = Database.Open(part, SqliteOpenMode.ReadWriteCreate, file.Settings.BusyTimeout))
         {
             target.Guarded(t =>
@@ -169,6 +179,19 @@ internal sealed class Backups(RecordsFile file)
             d.Pragma("journal_mode = DELETE");
             return Verify(d, cancellation);
         });
+    }
+
+    private bool FinishAsItIs(string part)
+    {
+        try
+        {
+            Finish(part, CancellationToken.None);
+            return true;
+        }
+        catch (StoreException error) when (error.Trouble is StoreTrouble.Damaged or StoreTrouble.Other)
+        {
+            return false;
+        }
     }
 
     /// <summary>

@@ -8,7 +8,8 @@ namespace PermitScreen.Data.Sqlite.Keeping;
 /// <summary>
 /// Replaces the records by those of a backup. Everything that is new about the restored records (timeline, version, change set, audit entry) is
 /// written into a copy of the backup first, and the copy then takes the place of the records in one transaction. However the process ends, the
-/// records are the old ones or the restored ones, and there is nothing to be finished afterwards.
+/// records are the old ones or the restored ones, and there is nothing to be finished afterwards. Damaged records can be replaced: they are why one
+/// restores, so that nothing more of them is needed than a version to be newer than.
 /// </summary>
 /// <param name="file">Records.</param>
 /// <param name="backups">Makes backups.</param>
@@ -30,9 +31,15 @@ internal sealed class Restore(RecordsFile file, Backups backups)
         try
         {
             using var copy = backups.OpenCopy(path, ready);
-            var replaced = VersionRow.Read(writer);
-            var (restored, now) = copy.Guarded(c => MakeReady(c, replaced, provenance with { Instant = Instants.Kept(provenance.Instant) }));
-            backups.Make(keepAs, CancellationToken.None);
+            copy.Guarded(c =>
+            {
+                Verification.Demand(c, CancellationToken.None);
+                return true;
+            });
+            var replaced = ReplacedRecords.Read(writer);
+            var sound = backups.Keep(keepAs);
+            var subject = replaced.Words + (sound ? "" : "; the replaced records were damaged");
+            var (restored, now) = copy.Guarded(c => MakeReady(c, replaced.Version, subject, provenance with { Instant = Instants.Kept(provenance.Instant) }));
             Reached(StoreMoment.BeforeRestore);
             PageCopy.Run(copy, writer, () => Reached(StoreMoment.InRestore));
             Reached(StoreMoment.AfterRestore);
@@ -44,13 +51,11 @@ internal sealed class Restore(RecordsFile file, Backups backups)
         }
     }
 
-    private static (long Restored, VersionRow Now) MakeReady(Database copy, VersionRow replaced, Provenance provenance)
+    private static (long Restored, VersionRow Now) MakeReady(Database copy, long replaced, string inPlaceOf, Provenance provenance)
     {
-        Verification.Demand(copy, CancellationToken.None);
         var held = VersionRow.Read(copy);
-        var version = Math.Max(held.Version, replaced.Version) + 1;
-        var subject = FormattableString.Invariant(
-            $"version {held.Version}, in place of version {replaced.Version} whose newest audit entry {replaced.AuditSequence} has the hash {replaced.AuditHash}");
+        var version = Math.Max(held.Version, replaced) + 1;
+        var subject = FormattableString.Invariant($"version {held.Version}, in place of {inPlaceOf}");
         copy.Run("BEGIN IMMEDIATE");
         var now = ChangeSetWriter.Write(copy, held with { Timeline = Guid.NewGuid() }, version, Action, subject, provenance, []);
         copy.Run("COMMIT");

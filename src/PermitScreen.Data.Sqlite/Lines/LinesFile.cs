@@ -15,13 +15,15 @@ internal sealed class LinesFile : IDisposable
     public const string Table = "lines";
 
     private const string AsideSuffix = ".damaged";
+    private const int GuidLength = 16;
 
     private readonly Database _writer;
     private readonly IStoreProbe? _probe;
 
-    private LinesFile(Database writer, SqliteSettings settings)
+    private LinesFile(Database writer, string id, SqliteSettings settings)
     {
         _writer = writer;
+        Id = id;
         _probe = settings.Probe;
         Readers = new ReaderPool(() =>
         {
@@ -30,6 +32,9 @@ internal sealed class LinesFile : IDisposable
             return database;
         });
     }
+
+    /// <summary>Identity, made at random with the file.</summary>
+    public string Id { get; }
 
     /// <summary>Connections that read.</summary>
     public ReaderPool Readers { get; }
@@ -56,7 +61,11 @@ internal sealed class LinesFile : IDisposable
         var path = Path.Combine(settings.Folder, FileName);
         try
         {
-            File.Move(path, path + AsideSuffix, overwrite: true);
+            if (File.Exists(path))
+            {
+                File.Move(path, path + AsideSuffix, overwrite: true);
+            }
+
             File.Delete(path + "-wal");
             File.Delete(path + "-shm");
         }
@@ -106,8 +115,8 @@ internal sealed class LinesFile : IDisposable
         var database = Database.Open(Path.Combine(settings.Folder, FileName), SqliteOpenMode.ReadWriteCreate, settings.BusyTimeout);
         try
         {
-            var schema = database.Guarded(d => Prepare(d, settings));
-            return (new LinesFile(database, settings), schema == 0);
+            var (schema, id) = database.Guarded(d => (Prepare(d, settings), ReadId(d)));
+            return (new LinesFile(database, id, settings), schema == 0);
         }
         catch
         {
@@ -129,7 +138,13 @@ internal sealed class LinesFile : IDisposable
 
         // What a loss of power takes is computed anew.
         database.Pragma(settings.Temporary ? "synchronous = OFF" : "synchronous = NORMAL");
-        migrator.Migrate(database, schema, static _ => { });
+        migrator.Migrate(database, schema, static d => d.Run("INSERT INTO identity (id, value) VALUES (1, $1)", Guid.NewGuid().ToByteArray(bigEndian: true)));
         return schema;
+    }
+
+    private static string ReadId(Database database)
+    {
+        using var rows = database.Query("identity", "SELECT value FROM identity WHERE id = 1");
+        return rows.Next() ? new Guid(rows.Bytes(0, GuidLength), bigEndian: true).ToString("N") : throw rows.Damaged("the one row", "it is missing");
     }
 }

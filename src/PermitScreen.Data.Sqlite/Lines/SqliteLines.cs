@@ -10,7 +10,9 @@ internal sealed class SqliteLines : ILineStore, IDisposable
     private readonly SqliteSettings _settings;
     private readonly ReaderWriterLockSlim _swap = new();
     private readonly Lock _writing = new();
-    private LinesFile _file;
+
+    // Null after a replacement that failed: there are no lines then, and the next write tries again.
+    private LinesFile? _file;
 
     /// <summary>Opens the file; sets aside one that cannot be used.</summary>
     /// <param name="settings">Settings.</param>
@@ -22,6 +24,23 @@ internal sealed class SqliteLines : ILineStore, IDisposable
 
     /// <summary>Whether the file was missing, or was replaced.</summary>
     public bool WereLost { get; private set; }
+
+    /// <summary>Identity of the file, made with it; empty while there is no file.</summary>
+    public string Id
+    {
+        get
+        {
+            _swap.EnterReadLock();
+            try
+            {
+                return _file?.Id ?? "";
+            }
+            finally
+            {
+                _swap.ExitReadLock();
+            }
+        }
+    }
 
     /// <inheritdoc/>
     public byte[]? Find(Digest key) => Read<byte[]?>(
@@ -80,7 +99,11 @@ internal sealed class SqliteLines : ILineStore, IDisposable
     /// <inheritdoc/>
     public void Dispose()
     {
-        _file.Dispose();
+        lock (_writing)
+        {
+            _file?.Dispose();
+        }
+
         _swap.Dispose();
     }
 
@@ -89,7 +112,7 @@ internal sealed class SqliteLines : ILineStore, IDisposable
         _swap.EnterReadLock();
         try
         {
-            return _file.Readers.Read(read);
+            return _file is { } file ? file.Readers.Read(read) : damaged;
         }
         catch (StoreException error) when (error.Trouble == StoreTrouble.Damaged)
         {
@@ -107,24 +130,24 @@ internal sealed class SqliteLines : ILineStore, IDisposable
         {
             try
             {
-                _file.Write(what, work);
+                (_file ?? Swap(() => LinesFile.OpenOrReplace(_settings).File)).Write(what, work);
             }
             catch (StoreException error) when (error.Trouble == StoreTrouble.Damaged)
             {
-                Replace();
-                _file.Write(what, work);
+                Swap(() => LinesFile.Replace(_settings)).Write(what, work);
             }
         }
     }
 
-    private void Replace()
+    private LinesFile Swap(Func<LinesFile> open)
     {
         _swap.EnterWriteLock();
         try
         {
-            _file.Dispose();
-            _file = LinesFile.Replace(_settings);
             WereLost = true;
+            _file?.Dispose();
+            _file = null;
+            return _file = open();
         }
         finally
         {

@@ -74,8 +74,8 @@ internal static class ChangeSetWriter
                 digest.AddBegun(begun);
                 new ResourceRow(change.Kind, change.Name, revisions + 1, version, NewestTo: null).Put(database);
 
-                // Lines that the revision before needed too were asked for with it: they are kept, or on the backlog still.
-                var asked = change.Ended is null ? [] : ContentRow.LinesOf(database, change.Ended.Content);
+                // Lines that the revision before needed too were asked for with it: they are kept, or on the backlog still. Those that failed are tried again.
+                var asked = change.Ended is null ? [] : ContentRow.LinesOf(database, change.Ended.Content).Where(l => !BacklogRow.HasFailed(database, l));
                 foreach (var line in ContentRow.LinesOf(database, begun.Content).Except(asked))
                 {
                     BacklogRow.Ask(database, new PendingLines(line, change.Name, begun.Content, Instants.Kept(provenance.Instant), Failure: null));

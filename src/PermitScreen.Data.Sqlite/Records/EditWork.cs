@@ -13,9 +13,9 @@ internal static class EditWork
     /// <returns>What became of it, and whether anything was written.</returns>
     public static (ChangeOutcome Outcome, bool Keep) Do(Database database, ChangeRequest request)
     {
-        if (request.Stamp is { } stamp && RequestRow.Find(database, stamp.RequestId) is { } earlier)
+        if (request.Stamp is { } stamp && Seen(database, stamp) is { } seen)
         {
-            return (earlier.Stamp.Fingerprint == stamp.Fingerprint ? new ChangeOutcome.Done(earlier.Version, earlier.Content, Repeated: true) : new ChangeOutcome.RequestIdReused(), false);
+            return (seen, false);
         }
 
         var before = VersionRow.Read(database);
@@ -47,6 +47,16 @@ internal static class EditWork
 
         return (new ChangeOutcome.Done(now.Version, content?.Hash, Repeated: false), true);
     }
+
+    /// <summary>What was answered to a request before; null where it was not seen yet.</summary>
+    /// <param name="database">Records, in a transaction.</param>
+    /// <param name="stamp">Stamp of the request.</param>
+    public static ChangeOutcome? Seen(Database database, RequestStamp stamp) => RequestRow.Find(database, stamp.RequestId) switch
+    {
+        null => null,
+        { } earlier when earlier.Stamp.Fingerprint == stamp.Fingerprint => new ChangeOutcome.Done(earlier.Version, earlier.Content, Repeated: true),
+        _ => new ChangeOutcome.RequestIdReused(),
+    };
 
     /// <summary>What stands against an edit; null where nothing does.</summary>
     private static ChangeOutcome? Against(Edit edit, RevisionHead? newest, long version) => edit switch

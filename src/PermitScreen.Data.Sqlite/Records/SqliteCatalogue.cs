@@ -66,6 +66,9 @@ internal sealed class SqliteCatalogue(RecordsFile file) : ICatalogueStore
         file.ReadAsync(database => AuditSearch.Read(database, before, most), cancellation);
 
     /// <inheritdoc/>
+    public Task<ChangeOutcome?> FindRequestAsync(RequestStamp stamp, CancellationToken cancellation) => file.ReadAsync(database => EditWork.Seen(database, stamp), cancellation);
+
+    /// <inheritdoc/>
     public Task<ChangeOutcome> CommitAsync(ChangeRequest request, CancellationToken cancellation) =>
         file.Writer.WriteAsync(request.Action, database => EditWork.Do(database, request), cancellation);
 }

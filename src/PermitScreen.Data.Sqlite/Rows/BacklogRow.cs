@@ -44,6 +44,11 @@ internal static class BacklogRow
         return rows.Next() ? Read(rows) : null;
     }
 
+    /// <summary>Whether lines are on the backlog with a failure.</summary>
+    /// <param name="database">Records.</param>
+    /// <param name="key">Address.</param>
+    public static bool HasFailed(Database database, Digest key) => Find(database, key) is { Failure: not null };
+
     /// <summary>Strikes lines off.</summary>
     /// <param name="database">Records.</param>
     /// <param name="key">Address.</param>

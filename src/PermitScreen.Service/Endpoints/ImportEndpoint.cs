@@ -1,4 +1,5 @@
 using Grpc.Core;
+using PermitScreen.Catalogue.Snapshots;
 using PermitScreen.Catalogue.Storage;
 using PermitScreen.Contracts.V1;
 using PermitScreen.Mechanics.Faults;
@@ -16,15 +17,19 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
     private const int MostPerPage = 1000;
     private const int MostItems = 2000;
     private const int MostPieces = 10_000_000;
-    private const int RefusalsTold = 20;
+    private const int RefusalsTold = 5;
+    private const int FaultsTold = 2;
+    private const int LongestText = 1000;
+    private const int MostSkipped = 1_000_000_000;
     private readonly IImportStore _imports;
     private readonly ICatalogueStore _store;
+    private readonly ICatalogue _catalogue;
     private readonly ImportChecks _checks;
     private readonly ChangeDesk _desk;
     private readonly ChangeCaller _caller;
 
-    internal ImportEndpoint(IImportStore imports, ICatalogueStore store, ImportChecks checks, ChangeDesk desk, ChangeCaller caller) =>
-        (_imports, _store, _checks, _desk, _caller) = (imports, store, checks, desk, caller);
+    internal ImportEndpoint(IImportStore imports, ICatalogueStore store, ICatalogue catalogue, ImportChecks checks, ChangeDesk desk, ChangeCaller caller) =>
+        (_imports, _store, _catalogue, _checks, _desk, _caller) = (imports, store, catalogue, checks, desk, caller);
 
     /// <inheritdoc/>
     public override async Task<CreateImportResponse> CreateImport(CreateImportRequest request, ServerCallContext context)
@@ -33,6 +38,7 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
         var provenance = _caller.Read(context, request.ChangeReason, faults);
         var id = request.ImportId.Length > 0 ? request.ImportId : Guid.NewGuid().ToString("D");
         Names.Import(faults, "import_id", ImportWriter.Name(id));
+        ChangeCaller.RequirePlain("source_fingerprint", request.SourceFingerprint, LongestText, faults);
         Refuse(faults);
         var head = await _imports.BeginAsync(new ImportBeginning(id, request.SourceFingerprint, request.AllowPartial, provenance), context.CancellationToken)
             ?? throw BadRequests.Exists("permitscreen.dev/Import", ImportWriter.Name(id), $"{ImportWriter.Name(id)} was begun with other fields; give another import_id.");
@@ -47,7 +53,7 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
     public override async Task<ListImportsResponse> ListImports(ListImportsRequest request, ServerCallContext context)
     {
         var size = Pages.Size(request.HasPageSize, request.PageSize, DefaultPage, MostPerPage);
-        var (_, start) = Pages.ReadIndex(request.PageToken, 0, int.MaxValue);
+        var (_, start) = Pages.ReadIndex(request.PageToken, 0, MostSkipped);
         ImportState? state = request.State switch
         {
             Contracts.V1.ImportState.Staging => ImportState.Staging,
@@ -80,8 +86,14 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
             faults.Add("origins", FormattableString.Invariant($"Found {request.Origins.Count} for {items} items; give one for each, or none."));
         }
 
+        for (var i = 0; i < request.Origins.Count; i++)
+        {
+            ChangeCaller.RequirePlain(FormattableString.Invariant($"origins[{i}]"), request.Origins[i], LongestText, faults);
+        }
+
         Refuse(faults);
-        var piece = _checks.Check(index, CanonicalForm.Fingerprint(request), request.Structures, request.Policies, request.Origins, context.CancellationToken);
+        var snapshot = request.Policies.Count > 0 ? await _catalogue.CurrentAsync(null, context.CancellationToken) : null;
+        var piece = _checks.Check(index, CanonicalForm.Fingerprint(request), request.Structures, request.Policies, snapshot, request.Origins, context.CancellationToken);
         var (outcome, head) = await _imports.StageAsync(ImportWriter.Id(request.Name), piece, context.CancellationToken);
         switch (outcome)
         {
@@ -111,10 +123,10 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
         {
             case PublishOutcome.Published published:
                 await _desk.WarmAsync();
-                return new PublishImportResponse { Import = await WriteAsync(published.Head, context) };
+                return new PublishImportResponse { Import = ImportWriter.Write(published.Head, await VersionAfterAsync(published.Head)) };
             case PublishOutcome.Refused refused:
                 throw BadRequests.Precondition(request.Name, FormattableString.Invariant($"{refused.Head.Refused} items of {request.Name} were refused, and it does not allow that; nothing was published. ListImportRefusals tells all: ")
-                    + string.Join(" ", refused.First.Take(RefusalsTold).Select(r => $"{r.Origin} {r.Resource}: {string.Join(" ", r.Faults)}".Trim())));
+                    + string.Join(" ", refused.First.Take(RefusalsTold).Select(r => $"{r.Origin} {r.Resource}: {string.Join(" ", r.Faults.Take(FaultsTold))}".Trim())));
             case PublishOutcome.GivenUp:
                 throw BadRequests.Precondition(request.Name, $"{request.Name} was given up; begin another import.");
             case PublishOutcome.PiecesMissing missing:
@@ -142,7 +154,7 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
     {
         var head = await FindAsync(request.Parent, "parent", context);
         var size = Pages.Size(request.HasPageSize, request.PageSize, DefaultPage, MostPerPage);
-        var (_, start) = Pages.ReadIndex(request.PageToken, 0, int.MaxValue);
+        var (_, start) = Pages.ReadIndex(request.PageToken, 0, MostSkipped);
         var refusals = await _imports.ReadRefusalsAsync(head.ImportId, start, size + 1, context.CancellationToken);
         var response = new ListImportRefusalsResponse { NextPageToken = Pages.Next(0, start, size, start + refusals.Count) };
         response.Refusals.AddRange(refusals.Take(size).Select(ImportWriter.Write));
@@ -170,6 +182,19 @@ public sealed class ImportEndpoint : ImportService.ImportServiceBase
     }
 
     private async Task<Import> WriteAsync(ImportHead head, ServerCallContext context) => ImportWriter.Write(head, await VersionAsync(context));
+
+    /// <summary>It is published, whatever becomes of this question.</summary>
+    private async Task<long> VersionAfterAsync(ImportHead head)
+    {
+        try
+        {
+            return (await _store.ReadVersionAsync(CancellationToken.None)).Version;
+        }
+        catch (StoreException)
+        {
+            return head.Result?.Version ?? head.BaseVersion;
+        }
+    }
 
     private async Task<long> VersionAsync(ServerCallContext context) => (await _store.ReadVersionAsync(context.CancellationToken)).Version;
 }

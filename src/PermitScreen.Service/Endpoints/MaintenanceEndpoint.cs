@@ -115,6 +115,12 @@ public sealed class MaintenanceEndpoint : MaintenanceService.MaintenanceServiceB
                 return new RestoreBackupResponse { RestoredVersion = held.Version };
             }
 
+            // Asked only where the caller wants it: records that are damaged may have no version to tell.
+            if (head.HasReplacedVersion && (await _store.ReadVersionAsync(context.CancellationToken)).Version is var newest && newest != head.ReplacedVersion)
+            {
+                throw new RpcException(new Status(StatusCode.Aborted, FormattableString.Invariant($"Version {head.ReplacedVersion} was to be replaced, but the newest is {newest}: somebody changed the catalogue, or it is restored already. Nothing was changed.")));
+            }
+
             return await _restoring.RunAsync(path, provenance, context.CancellationToken);
         }
         catch (StoreException error) when (error.Message.Contains(path, StringComparison.Ordinal))
@@ -169,8 +175,8 @@ public sealed class MaintenanceEndpoint : MaintenanceService.MaintenanceServiceB
 
             if (entries.Count < EntriesAtOnce)
             {
-                // Version 0 was made by no change set; the first entry of all stands for it.
-                return entries[^1].Hash.ToString();
+                // Version 0 was made by no change set, and other records may have been restored since.
+                return "";
             }
 
             before = entries[^1].Sequence;

@@ -58,7 +58,7 @@ internal static class Pages
 
     /// <summary>Token of the page after, by index; empty at the end.</summary>
     public static string Next(long version, int start, int count, int total) =>
-        start + count < total ? Token(version, (start + count).ToString(CultureInfo.InvariantCulture)) : "";
+        (long)start + count < total ? Token(version, (start + count).ToString(CultureInfo.InvariantCulture)) : "";
 
     private static Grpc.Core.RpcException NotOurs(string token) =>
         BadRequests.Of("page_token", $"\"{token}\" is no token of this list; give next_page_token of the answer before, or nothing for the first page.");

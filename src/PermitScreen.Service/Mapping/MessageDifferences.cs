@@ -99,7 +99,7 @@ internal static class MessageDifferences
 
         // A field without presence that holds its default was not said.
         var value = field.Accessor.GetValue(message);
-        return value switch
+        return field.HasPresence ? value : value switch
         {
             "" or false or 0 or 0L or null => null,
             Enum e when Convert.ToInt32(e, CultureInfo.InvariantCulture) == 0 => null,

@@ -58,7 +58,7 @@ internal static class CanonicalForm
     /// <param name="parser">Parser of its kind.</param>
     /// <param name="bytes">The message.</param>
     /// <param name="faults">Takes the fault.</param>
-    public static void RequireKnown<T>(MessageParser<T> parser, byte[] bytes, FaultList faults)
+    public static void RequireKnown<T>(MessageParser<T> parser, ReadOnlySpan<byte> bytes, FaultList faults)
         where T : IMessage<T>
     {
         if (parser.WithDiscardUnknownFields(true).ParseFrom(bytes).CalculateSize() != bytes.Length)

@@ -35,6 +35,8 @@ internal sealed class ChangeCaller(RecordsPlace place, TimeProvider time)
                 : FormattableString.Invariant($"Found {reason.Length} characters; allowed are at most {LongestReason}."));
         }
 
+        RequirePlain("change_reason", reason, LongestReason, faults);
+
         return new Provenance(Actor(context, faults), reason.Trim(), Now());
     }
 
@@ -66,6 +68,19 @@ internal sealed class ChangeCaller(RecordsPlace place, TimeProvider time)
         }
 
         return new RequestStamp(id.ToString("D"), fingerprint);
+    }
+
+    /// <summary>Adds a fault where a text that is kept holds what no text should.</summary>
+    /// <param name="field">Field.</param>
+    /// <param name="text">Text.</param>
+    /// <param name="most">Most characters.</param>
+    /// <param name="faults">Takes the fault.</param>
+    public static void RequirePlain(string field, string text, int most, FaultList faults)
+    {
+        if (text.Length > most || text.Any(c => char.IsControl(c) && c is not ('\n' or '\r' or '\t')))
+        {
+            faults.Add(field, FormattableString.Invariant($"Allowed are at most {most} characters, none of them a control character but tabs and ends of lines."));
+        }
     }
 
     private static string Actor(ServerCallContext context, FaultList faults)

@@ -14,6 +14,9 @@ namespace PermitScreen.Service.Revisions;
 /// <param name="logger">Log.</param>
 internal sealed partial class ChangeDesk(ICatalogueStore store, CatalogueGate catalogue, BacklogBell bell, ILogger<ChangeDesk> logger)
 {
+    /// <summary>An etag that no revision has: for changes whose content was not made from the newest one.</summary>
+    public const string NeverNewest = "-";
+
     /// <summary>Makes a change.</summary>
     /// <returns>The revision that stands now for this request, and the version; no revision where the resource was taken out.</returns>
     /// <exception cref="RpcException">ALREADY_EXISTS, NOT_FOUND, ABORTED or INVALID_ARGUMENT; nothing was changed.</exception>
@@ -34,11 +37,21 @@ internal sealed partial class ChangeDesk(ICatalogueStore store, CatalogueGate ca
             case ChangeOutcome.Outdated outdated:
                 throw BadRequests.Outdated(name, outdated.Newest);
             case ChangeOutcome.RequestIdReused:
-                throw BadRequests.Of("request_id", $"\"{request.Stamp!.RequestId}\" was used for another request; give each request an id of its own.");
+                throw Reused(request.Stamp!);
             default:
                 throw BadRequests.NotFound(Type(kind), name, "It is not in the newest catalogue version.");
         }
     }
+
+    /// <summary>The answer to a request that was done before; null where it was not. Asked first: a retry is not to be judged by what came after it.</summary>
+    /// <exception cref="RpcException">INVALID_ARGUMENT where the id was used for another request.</exception>
+    public async Task<(StoredRevision? Revision, long Version)?> FindRepeatedAsync(RequestStamp? stamp, ResourceKind kind, string name, CancellationToken cancellation) =>
+        stamp is null ? null : await store.FindRequestAsync(stamp, cancellation) switch
+        {
+            ChangeOutcome.Done done => (done.Content is null ? null : await store.FindAsync(kind, name, done.Version, cancellation), done.Version),
+            ChangeOutcome.RequestIdReused => throw Reused(stamp),
+            _ => null,
+        };
 
     /// <summary>After a commit. A snapshot that cannot be warmed is no failure of the change: every call confirms its version anyway.</summary>
     public async Task WarmAsync()
@@ -64,6 +77,9 @@ internal sealed partial class ChangeDesk(ICatalogueStore store, CatalogueGate ca
         }) is { } content
             ? new StoredRevision(new RevisionHead(content.Kind, content.Name, version, null, content.Hash, request.Provenance), content.Bytes)
             : null;
+
+    private static RpcException Reused(RequestStamp stamp) =>
+        BadRequests.Of("request_id", $"\"{stamp.RequestId}\" was used for another request; give each request an id of its own.");
 
     private static string Type(ResourceKind kind) => kind == ResourceKind.Structure ? "permitscreen.dev/Structure" : "permitscreen.dev/Policy";
 

@@ -25,15 +25,18 @@ public sealed class PolicyChanges
     {
         var faults = new FaultList();
         var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
+        if (await RepeatedAsync(stamp, request.Policy, context) is { } before)
+        {
+            return before;
+        }
+
         var content = Draft(request.Policy, faults);
         if (content is not null)
         {
             var snapshot = await _catalogue.CurrentAsync(null, context.CancellationToken);
             var newest = PolicyDocuments.Newest(snapshot, request.Policy.Name);
-            var next = (newest?.Document!.DocumentVersion ?? 0) + 1;
-
-            // A retry finds its own document there; the records know it by its request id.
-            if (request.Policy.DocumentVersion != next && !(stamp is not null && request.Policy.DocumentVersion == next - 1))
+            var next = (newest is null ? 0 : PolicyDocuments.VersionOf(newest.Revision.Head.Name)) + 1;
+            if (request.Policy.DocumentVersion != next)
             {
                 faults.Add("policy.document_version", FormattableString.Invariant($"Found {request.Policy.DocumentVersion}; the next document of {request.Policy.Name} is {next}."));
             }
@@ -46,6 +49,11 @@ public sealed class PolicyChanges
     {
         var faults = new FaultList();
         var (provenance, stamp) = Caller(request, request.ChangeReason, request.RequestId, context, faults);
+        if (await RepeatedAsync(stamp, request.Policy, context) is { } before)
+        {
+            return before;
+        }
+
         var content = Draft(request.Policy, faults);
         RequireEtag(faults, "policy.etag", request.Policy?.Etag ?? "");
         if (content is not null && !faults.Any)
@@ -148,6 +156,11 @@ public sealed class PolicyChanges
     private (Provenance Provenance, RequestStamp? Stamp) Caller(IMessage request, string reason, string requestId, ServerCallContext context, FaultList faults) =>
         (_caller.Read(context, reason, faults), ChangeCaller.Stamp(requestId, CanonicalForm.Fingerprint(request), faults));
 
+    private async Task<Policy?> RepeatedAsync(RequestStamp? stamp, Policy? policy, ServerCallContext context) =>
+        policy is not null && await _desk.FindRepeatedAsync(stamp, ResourceKind.Policy, CanonicalForm.DocumentName(policy), context.CancellationToken) is { Revision: { } before }
+            ? CanonicalForm.Policy(before)
+            : null;
+
     private async Task<Policy> NewestAsync(string name, CancellationToken cancellation)
     {
         var snapshot = await _catalogue.CurrentAsync(null, cancellation);
@@ -164,10 +177,19 @@ public sealed class PolicyChanges
             throw BadRequests.From("The request", faults.All);
         }
 
+        if (await _desk.FindRepeatedAsync(stamp, ResourceKind.Policy, name, context.CancellationToken) is { Revision: { } before })
+        {
+            return CanonicalForm.Policy(before);
+        }
+
         var policy = await NewestAsync(name, context.CancellationToken);
         if (policy.Etag == etag)
         {
             change(policy);
+        }
+        else
+        {
+            etag = ChangeDesk.NeverNewest;
         }
 
         // With an old etag the records refuse the change, or know it as a retry; the content is then not looked at.

@@ -10,12 +10,13 @@ namespace PermitScreen.Service.Revisions;
 internal static class PolicyDocuments
 {
     private const char Mark = '@';
+    private const int MostNamed = 20;
 
-    /// <summary>Documents of a policy, by document version; those that this version of the service cannot read are left out.</summary>
+    /// <summary>Documents of a policy, by document version; also those that this version of the service cannot read.</summary>
     /// <param name="snapshot">Catalogue.</param>
     /// <param name="policy">Resource name, policies/{policy}.</param>
     public static List<PolicyEntry> Of(CatalogueSnapshot snapshot, string policy) =>
-        [.. snapshot.Policies.Values.Where(p => p.Document?.Name == policy).OrderBy(p => p.Document!.DocumentVersion)];
+        [.. snapshot.Policies.Values.Where(p => p.Revision.Head.Name.StartsWith(policy + Mark, StringComparison.Ordinal)).OrderBy(p => VersionOf(p.Revision.Head.Name))];
 
     /// <summary>The newest document of a policy, or the one named; null where there is none.</summary>
     /// <param name="snapshot">Catalogue.</param>
@@ -36,22 +37,33 @@ internal static class PolicyDocuments
             return Checked(entry.Document ?? throw BadRequests.Precondition(name, $"This version of the service cannot read {name}; revise it."), asOf);
         }
 
-        var documents = Of(snapshot, name).Select(p => p.Document!).ToList();
-        if (documents.Count == 0)
+        var entries = Of(snapshot, name);
+        if (entries.Count == 0)
         {
             throw NoSuch(snapshot, name);
         }
 
-        var enacted = documents.Where(d => d.State == PolicyState.InForce).ToList();
-        return enacted.FindLast(d => !(asOf < d.InForceFrom) && !(asOf > d.InForceTo))
-            ?? Checked(enacted.LastOrDefault() ?? documents.FindLast(d => d.State == PolicyState.Draft) ?? documents[^1], asOf);
+        if (entries.Find(e => e.Document is null) is { } unreadable)
+        {
+            // It may be the one in force: to pass over it would screen under an older one without a word.
+            throw BadRequests.Precondition(name, $"This version of the service cannot read {unreadable.Revision.Head.Name}; revise it, or name the document to screen under.");
+        }
+
+        var documents = entries.ConvertAll(e => e.Document!);
+        return documents.FindLast(d => d.State == PolicyState.InForce && !(asOf < d.InForceFrom) && !(asOf > d.InForceTo))
+            ?? Checked(documents.FindLast(d => d.State != PolicyState.Draft) ?? documents[^1], asOf);
     }
+
+    /// <summary>Version in the name of a document.</summary>
+    /// <param name="documentName">policies/{policy}@{version}.</param>
+    public static int VersionOf(string documentName) => int.Parse(documentName.AsSpan(documentName.LastIndexOf(Mark) + 1), NumberStyles.None, CultureInfo.InvariantCulture);
 
     /// <summary>NOT_FOUND, naming the policies that there are.</summary>
     public static RpcException NoSuch(CatalogueSnapshot snapshot, string name)
     {
-        var known = snapshot.Policies.Values.Select(p => p.Document is { } d ? (name.Contains(Mark, StringComparison.Ordinal) ? p.Revision.Head.Name : d.Name) : p.Revision.Head.Name).Distinct();
-        return BadRequests.NotFound("permitscreen.dev/Policy", name, $"Known are: {string.Join(", ", known)}.");
+        var known = snapshot.Policies.Keys.Select(k => name.Contains(Mark, StringComparison.Ordinal) ? k : k[..k.LastIndexOf(Mark)]).Distinct().ToList();
+        var more = known.Count > MostNamed ? FormattableString.Invariant($" and {known.Count - MostNamed} more") : "";
+        return BadRequests.NotFound("permitscreen.dev/Policy", name, $"Known are: {string.Join(", ", known.Take(MostNamed))}{more}.");
     }
 
     private static PolicyDocument Checked(PolicyDocument policy, DateOnly asOf)

@@ -9,8 +9,8 @@ namespace PermitScreen.Service.Revisions;
 /// <param name="place">Where the records are.</param>
 /// <param name="keeping">Records.</param>
 /// <param name="desk">Warms the snapshot.</param>
-/// <param name="renewal">Puts lines that are not kept on the backlog.</param>
-internal sealed class Restoring(RecordsPlace place, IRecordKeeping keeping, ChangeDesk desk, BacklogRenewal renewal)
+/// <param name="worker">Puts lines that are not kept on the backlog.</param>
+internal sealed class Restoring(RecordsPlace place, IRecordKeeping keeping, ChangeDesk desk, LineWorker worker)
 {
     /// <summary>Verifies the backup and puts it in the place of the records.</summary>
     /// <param name="path">Backup.</param>
@@ -22,7 +22,7 @@ internal sealed class Restoring(RecordsPlace place, IRecordKeeping keeping, Chan
         var keptAs = string.Create(CultureInfo.InvariantCulture, $"replaced-{provenance.Instant:yyyyMMdd'T'HHmmssfff'Z'}.db");
         var result = await keeping.RestoreAsync(path, place.FileOf(keptAs), provenance, cancellation);
         await desk.WarmAsync();
-        await renewal.RenewMissingAsync(CancellationToken.None);
+        worker.RenewSoon();
         return new RestoreBackupResponse
         {
             RestoredVersion = result.Restored,

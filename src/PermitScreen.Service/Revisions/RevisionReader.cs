@@ -18,19 +18,31 @@ internal sealed class RevisionReader(ILineSource lines) : IRevisionReader
     /// <inheritdoc/>
     public PreparedStructure ReadStructure(StoredRevision revision)
     {
+        // A build that does not know a field must not read past it: it may be a restriction.
         var faults = new FaultList();
+        CanonicalForm.RequireKnown(Contracts.V1.Structure.Parser, revision.Content.Span, faults);
         var structure = CanonicalForm.Structure(revision);
-        return StructureMapper.Map(structure, faults, structure.Etag) is { } record && StructurePreparation.Prepare(record, lines, faults) is { } prepared
+        return !faults.Any && StructureMapper.Map(structure, faults, structure.Etag) is { } record && StructurePreparation.Prepare(record, lines, faults) is { } prepared
             ? prepared
             : Unreadable(structure, faults);
     }
 
     /// <inheritdoc/>
-    public PolicyDocument? ReadPolicy(StoredRevision revision) => PolicyMapper.Map(CanonicalForm.Policy(revision), new FaultList());
+    public PolicyDocument? ReadPolicy(StoredRevision revision)
+    {
+        var faults = new FaultList();
+        CanonicalForm.RequireKnown(Contracts.V1.Policy.Parser, revision.Content.Span, faults);
+        return faults.Any ? null : PolicyMapper.Map(CanonicalForm.Policy(revision), faults);
+    }
 
     /// <summary>The record of a structure without its lines; null where this version cannot read it.</summary>
     /// <param name="revision">Revision.</param>
-    public static StructureRecord? ReadRecord(StoredRevision revision) => StructureMapper.Map(CanonicalForm.Structure(revision), new FaultList(), revision.Head.Content.Etag);
+    public static StructureRecord? ReadRecord(StoredRevision revision)
+    {
+        var faults = new FaultList();
+        CanonicalForm.RequireKnown(Contracts.V1.Structure.Parser, revision.Content.Span, faults);
+        return faults.Any ? null : StructureMapper.Map(CanonicalForm.Structure(revision), faults, revision.Head.Content.Etag);
+    }
 
     /// <summary>It was sound when it was kept; this version asks for more. It is not assessed, and says why.</summary>
     private static PreparedStructure Unreadable(Contracts.V1.Structure structure, FaultList faults)

@@ -25,6 +25,11 @@ public sealed class StructureChanges
         var provenance = _caller.Read(context, request.ChangeReason, faults);
         var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint(request), faults);
         var structure = Named(request, faults);
+        if (!faults.Any && await _desk.FindRepeatedAsync(stamp, ResourceKind.Structure, structure!.Name, context.CancellationToken) is { Revision: { } before })
+        {
+            return new CreateStructureResponse { Structure = CanonicalForm.Structure(before) };
+        }
+
         var content = structure is null ? null : _door.Structure(structure, faults.Under("structure"));
         if (faults.Any || content is null)
         {
@@ -62,7 +67,12 @@ public sealed class StructureChanges
             throw BadRequests.From("The request", faults.All);
         }
 
-        var whole = request.Structure;
+        if (await _desk.FindRepeatedAsync(stamp, ResourceKind.Structure, request.Structure.Name, context.CancellationToken) is { Revision: { } before })
+        {
+            return new UpdateStructureResponse { Structure = CanonicalForm.Structure(before) };
+        }
+
+        var (whole, etag) = (request.Structure, request.Structure.Etag);
         if (masks is not null)
         {
             // Where the etag is an old one there is nothing to merge with: the records refuse it, or answer a retry, before they look at content.
@@ -70,6 +80,11 @@ public sealed class StructureChanges
             if (snapshot.Find(whole.Name) is { } entry && entry.Revision.Head.Content.Etag == whole.Etag)
             {
                 whole = UpdateMasks.Merge(masks, request.Structure, CanonicalForm.Structure(entry.Revision));
+            }
+            else
+            {
+                // Should the old content come back before the commit: what was not merged must not be taken for the whole.
+                etag = ChangeDesk.NeverNewest;
             }
         }
 
@@ -84,7 +99,7 @@ public sealed class StructureChanges
             return new UpdateStructureResponse { Structure = Checked(whole, content) };
         }
 
-        var edit = new Edit.Revise(content, request.Structure.Etag);
+        var edit = new Edit.Revise(content, etag);
         var (revision, _) = await _desk.CommitAsync(new ChangeRequest("update structure", edit, provenance, stamp), ResourceKind.Structure, context.CancellationToken);
         return new UpdateStructureResponse { Structure = CanonicalForm.Structure(revision!) };
     }

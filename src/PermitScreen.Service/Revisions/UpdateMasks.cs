@@ -1,3 +1,4 @@
+using Google.Protobuf;
 using Google.Protobuf.WellKnownTypes;
 using PermitScreen.Contracts.V1;
 using PermitScreen.Mechanics.Faults;
@@ -38,7 +39,53 @@ internal static class UpdateMasks
     /// <summary>The newest content with the fields of the mask taken from the change; a field that the change lacks is taken out.</summary>
     public static Structure Merge(FieldMask mask, Structure change, Structure newest)
     {
-        mask.Merge(change, newest, new FieldMask.MergeOptions { ReplaceMessageFields = true, ReplaceRepeatedFields = true, ReplacePrimitiveFields = true });
+        foreach (var path in mask.Paths)
+        {
+            Take(path.Split('.'), change, newest);
+        }
+
         return newest;
+    }
+
+    /// <summary>Takes one field. What the change does not say is taken out, never set to 0: absent is not zero (rule F4).</summary>
+    /// <remarks>The library's own merge writes the default of an absent number as if it had been said.</remarks>
+    private static void Take(ReadOnlySpan<string> path, IMessage? change, IMessage target)
+    {
+        var field = target.Descriptor.FindFieldByName(path[0]);
+        var said = change is not null && (field.IsRepeated || !field.HasPresence || field.Accessor.HasValue(change));
+        if (path.Length > 1)
+        {
+            if (!said && !field.Accessor.HasValue(target))
+            {
+                return;
+            }
+
+            if (!field.Accessor.HasValue(target))
+            {
+                field.Accessor.SetValue(target, field.MessageType.Parser.ParseFrom(ByteString.Empty));
+            }
+
+            Take(path[1..], said ? (IMessage)field.Accessor.GetValue(change!) : null, (IMessage)field.Accessor.GetValue(target));
+            return;
+        }
+
+        field.Accessor.Clear(target);
+        if (!said)
+        {
+            return;
+        }
+
+        if (field.IsRepeated)
+        {
+            var items = (System.Collections.IList)field.Accessor.GetValue(target);
+            foreach (var item in (System.Collections.IList)field.Accessor.GetValue(change!))
+            {
+                items.Add(item);
+            }
+        }
+        else
+        {
+            field.Accessor.SetValue(target, field.Accessor.GetValue(change!));
+        }
     }
 }

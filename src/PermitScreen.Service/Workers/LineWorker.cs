@@ -30,6 +30,8 @@ internal sealed partial class LineWorker : BackgroundService
     private readonly RecordsPlace _place;
     private readonly ILogger<LineWorker> _logger;
     private long _computed;
+    private volatile string? _noted;
+    private volatile bool _renew;
 
     public LineWorker(
         CatalogueGate catalogue, ICatalogueStore store, IBacklogStore backlog, ILineStore lines, LineLibrary library, BacklogRenewal renewal, BacklogBell bell, RecordsPlace place, ILogger<LineWorker> logger) =>
@@ -42,17 +44,11 @@ internal sealed partial class LineWorker : BackgroundService
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
         await Task.Yield();
-        var renewed = false;
         while (!stoppingToken.IsCancellationRequested)
         {
             try
             {
-                if (!renewed)
-                {
-                    await RenewAsync(stoppingToken);
-                    renewed = true;
-                }
-
+                await RenewAsync(stoppingToken);
                 if (await WorkAsync(stoppingToken) == 0)
                 {
                     await _bell.WaitAsync(LongestRest, stoppingToken);
@@ -76,16 +72,40 @@ internal sealed partial class LineWorker : BackgroundService
         }
     }
 
-    /// <summary>After the lines were lost, or under another version of the mechanics, every structure goes on the backlog.</summary>
+    /// <summary>Looks soon whether every structure's lines are kept.</summary>
+    public void RenewSoon()
+    {
+        _noted = null;
+        _renew = true;
+        _bell.Ring();
+    }
+
+    /// <summary>
+    /// After the lines were lost, under another version of the mechanics, or after a restore, every structure whose lines are not kept goes on the
+    /// backlog. What was done is noted only afterwards: killed in between, it is done again.
+    /// </summary>
     private async Task RenewAsync(CancellationToken cancellation)
     {
         await _catalogue.CurrentAsync(null, cancellation);
-        if (_place.LinesWereLost || await _backlog.ReadMechanicsVersionAsync(cancellation) != TrussKey.MechanicsVersion)
+        var lines = _place.LinesId();
+        var state = $"{TrussKey.MechanicsVersion}/{lines}";
+        if (lines.Length == 0 || (state == _noted && !_renew))
         {
-            var count = await _renewal.RenewMissingAsync(cancellation);
-            await _backlog.NoteMechanicsVersionAsync(TrussKey.MechanicsVersion, cancellation);
-            LogRenewed(_logger, count);
+            return;
         }
+
+        if (_renew || await _backlog.ReadMechanicsVersionAsync(cancellation) != state)
+        {
+            _renew = false;
+            var count = await _renewal.RenewMissingAsync(cancellation);
+            await _backlog.NoteMechanicsVersionAsync(state, cancellation);
+            if (count > 0)
+            {
+                LogRenewed(_logger, count);
+            }
+        }
+
+        _noted = state;
     }
 
     /// <summary>One batch; returns how many were taken up.</summary>
@@ -98,26 +118,17 @@ internal sealed partial class LineWorker : BackgroundService
         }
 
         var blobs = new List<(Digest Key, byte[] Blob)>();
-        var ready = ImmutableArray.CreateBuilder<Digest>();
+        var ready = new List<PendingLines>();
         foreach (var work in pending)
         {
             cancellation.ThrowIfCancellationRequested();
-            var faults = new FaultList();
-            if (await TrussAsync(work, cancellation) is not { } truss)
+            if (await FailureAsync(work, blobs, cancellation) is { } failure)
             {
-                await _backlog.NoteFailureAsync(work.Key, "No kept revision has a truss of this address any more.", cancellation);
-            }
-            else if (_library.Ensure(truss, faults, out var blob))
-            {
-                ready.Add(work.Key);
-                if (blob is { } toKeep)
-                {
-                    blobs.Add(toKeep);
-                }
+                await _backlog.NoteFailureAsync(work.Key, failure, cancellation);
             }
             else
             {
-                await _backlog.NoteFailureAsync(work.Key, string.Join(" ", faults.All), cancellation);
+                ready.Add(work);
             }
         }
 
@@ -128,8 +139,45 @@ internal sealed partial class LineWorker : BackgroundService
         }
 
         // Only now: a kill before this line leaves them on the backlog, and they are found kept.
-        await _backlog.StrikeAsync(ready.ToImmutable(), CancellationToken.None);
+        ImmutableArray<Digest> keys = [.. ready.Select(r => r.Key)];
+        await _backlog.StrikeAsync(keys, CancellationToken.None);
+        if (_lines.Known(keys).Count < keys.Length)
+        {
+            // Somebody deleted lines while they were struck off.
+            RenewSoon();
+        }
+
         return pending.Count;
+    }
+
+    /// <summary>Why lines cannot be computed; null where they are kept, or among the blobs to be kept.</summary>
+    private async Task<string?> FailureAsync(PendingLines work, List<(Digest Key, byte[] Blob)> blobs, CancellationToken cancellation)
+    {
+        try
+        {
+            if (await TrussAsync(work, cancellation) is not { } truss)
+            {
+                return "No kept revision that this version of the service can read has a truss of this address.";
+            }
+
+            var faults = new FaultList();
+            if (!_library.Ensure(truss, faults, out var blob))
+            {
+                return string.Join(" ", faults.All);
+            }
+
+            blobs.AddRange(blob is { } toKeep ? [toKeep] : []);
+            return null;
+        }
+        catch (StoreException error) when (error.Trouble == StoreTrouble.Damaged)
+        {
+            // One damaged revision must not hold up the lines of all others.
+            return error.Message;
+        }
+        catch (InvalidOperationException error)
+        {
+            return error.Message;
+        }
     }
 
     private async Task<TrussModel?> TrussAsync(PendingLines work, CancellationToken cancellation)
@@ -153,6 +201,6 @@ internal sealed partial class LineWorker : BackgroundService
     [LoggerMessage(EventId = 10, Level = LogLevel.Warning, Message = "Influence lines could not be kept; they are computed again. {Reason}")]
     private static partial void LogTrouble(ILogger logger, Exception error, string reason);
 
-    [LoggerMessage(EventId = 11, Level = LogLevel.Information, Message = "The lines of {Count} structures are not kept in this version of the mechanics; they are on the backlog")]
+    [LoggerMessage(EventId = 11, Level = LogLevel.Information, Message = "The lines of {Count} structures are not kept, or of another version of the mechanics; they are on the backlog")]
     private static partial void LogRenewed(ILogger logger, int count);
 }

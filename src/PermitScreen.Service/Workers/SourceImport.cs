@@ -51,7 +51,7 @@ internal sealed class SourceImport(CatalogueSource source, IImportStore imports,
         {
             // Where a fault stands is told by the file and the item's index in it, which travel as the item's origin.
             var origins = structures.Select((_, i) => i.ToString(System.Globalization.CultureInfo.InvariantCulture)).ToList();
-            var piece = checks.Check(index, Digest.Of(BitConverter.GetBytes(index)), [.. structures.Select(s => s.Structure)], policies, origins, cancellation);
+            var piece = checks.Check(index, Digest.Of(BitConverter.GetBytes(index)), [.. structures.Select(s => s.Structure)], policies, null, origins, cancellation);
             foreach (var refusal in piece.Refusals)
             {
                 var (file, at, _) = structures[int.Parse(refusal.Origin, System.Globalization.CultureInfo.InvariantCulture)];

@@ -167,6 +167,8 @@ internal sealed class MemoryStore : ICatalogueStore
 
     public Task<IReadOnlyList<AuditEntry>> ReadAuditAsync(long? before, int most, CancellationToken cancellation) => throw new NotSupportedException();
 
+    public Task<ChangeOutcome?> FindRequestAsync(RequestStamp stamp, CancellationToken cancellation) => throw new NotSupportedException();
+
     public Task<ChangeOutcome> CommitAsync(ChangeRequest request, CancellationToken cancellation) => throw new NotSupportedException();
 
     private static ResourceKind KindOf(string name) => name.StartsWith("policies/", StringComparison.Ordinal) ? ResourceKind.Policy : ResourceKind.Structure;

@@ -53,6 +53,21 @@ public abstract class BacklogStoreContract
     }
 
     [Fact]
+    public async Task A_failed_line_that_the_next_revision_needs_too_is_tried_again()
+    {
+        await using var stores = await OpenAsync();
+        await stores.Catalogue.Done(Add(Structure("structures/a", "1", "failed", "kept", "pending")));
+        await stores.Backlog.StrikeAsync([Line("kept")], None);
+        await stores.Backlog.NoteFailureAsync(Line("failed"), "a mechanism", None);
+        var revised = Structure("structures/a", "2", "failed", "kept", "pending");
+        await stores.Catalogue.Done(Revise(revised, Structure("x", "1").Hash.Etag, minute: 8));
+        var pending = await stores.Backlog.ReadPendingAsync(10, None);
+        Assert.Equal([Line("pending"), Line("failed")], pending.Select(p => p.Key));
+        Assert.Equal(new PendingLines(Line("failed"), "structures/a", revised.Hash, Start.AddMinutes(8), null), pending[1]);
+        Assert.Empty((await stores.Backlog.ReadSummaryAsync(10, None)).Failures);
+    }
+
+    [Fact]
     public async Task Renewed_addresses_replace_those_noted_before()
     {
         await using var stores = await OpenAsync();

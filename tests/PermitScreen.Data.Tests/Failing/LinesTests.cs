@@ -99,6 +99,64 @@ public sealed class LinesTests : IDisposable
     }
 
     [Fact]
+    public async Task The_identity_goes_with_the_file()
+    {
+        string id;
+        await using (var records = SqliteStores.Open(_folder.Path))
+        {
+            id = records.LinesId;
+            Assert.NotEmpty(id);
+            records.Lines.Keep([(Line("1"), [1])]);
+            Assert.Equal(id, records.LinesId);
+        }
+
+        await using (var records = SqliteStores.Open(_folder.Path))
+        {
+            Assert.Equal(id, records.LinesId);
+        }
+
+        File.Delete(_folder.File("lines.db"));
+        await using var again = SqliteStores.Open(_folder.Path);
+        Assert.NotEmpty(again.LinesId);
+        Assert.NotEqual(id, again.LinesId);
+    }
+
+    /// <summary>A damaged file that cannot be set aside: there are no lines until it can.</summary>
+    [Fact]
+    public async Task A_replacement_that_fails_is_tried_again_at_the_next_write()
+    {
+        string id;
+        await using (var records = SqliteStores.Open(_folder.Path))
+        {
+            id = records.LinesId;
+            records.Lines.Keep([.. Enumerable.Range(0, 200).Select(i => (Line(Name(i)), Blob(i, 3000)))]);
+        }
+
+        // Pages 2 and 3 are the roots of the table and of its index: https://sqlite.org/fileformat2.html, section 1.6
+        var path = _folder.File("lines.db");
+        var bytes = await File.ReadAllBytesAsync(path);
+        bytes.AsSpan(4096, 8192).Fill(0x5A);
+        await File.WriteAllBytesAsync(path, bytes);
+        Directory.CreateDirectory(path + ".damaged");
+
+        await using var again = SqliteStores.Open(_folder.Path);
+        Assert.Equal(id, again.LinesId);
+        for (var i = 0; i < 2; i++)
+        {
+            Assert.Throws<StoreException>(() => again.Lines.Keep([(Line("1"), [1])]));
+            Assert.Equal((null, 0L, ""), (again.Lines.Find(Line("1")), again.Lines.Count(), again.LinesId));
+            Assert.Empty(again.Lines.AllKeys());
+            Assert.Empty(again.Lines.Known([Line("1")]));
+        }
+
+        Directory.Delete(path + ".damaged");
+        again.Lines.Keep([(Line("1"), [1])]);
+        Assert.Equal([1], again.Lines.Find(Line("1"))!);
+        Assert.True(again.LinesWereLost);
+        Assert.True(again.LinesId is not "" && again.LinesId != id);
+    }
+
+    [Fact]
     public async Task Keeping_is_all_or_nothing()
     {
         var probe = new ThrowingProbe(StoreMoment.LinesInsideTransaction);

@@ -75,12 +75,52 @@ public sealed class PolicyStateTests(RecordsService service) : IClassFixture<Rec
     }
 
     [Fact]
+    public async Task Rule_B9_After_a_withdrawal_a_draft_is_not_used_in_its_place()
+    {
+        var first = await CreateAsync("policies/shire", 1);
+        await CreateAsync("policies/shire", 2);
+        await Policies.WithdrawPolicyAsync(new WithdrawPolicyRequest { Name = "policies/shire@1", Etag = first.Etag, ChangeReason = "test" }, RecordsService.Actor);
+        var error = await Assert.ThrowsAsync<RpcException>(() => ScreenAsync("policies/shire"));
+        Assert.Equal(StatusCode.FailedPrecondition, error.StatusCode);
+        Assert.Equal("policies/shire@2", (await ScreenAsync("policies/shire@2")).Policy);
+    }
+
+    [Fact]
+    public async Task Rule_B9_An_import_is_no_way_round_the_states()
+    {
+        var draft = await CreateAsync("policies/borough", 1);
+        var confirmed = (await Policies.ConfirmPolicyAsync(
+            new ConfirmPolicyRequest { Name = "policies/borough@1", Etag = draft.Etag, ChangeReason = "test", Confirmation = new PolicyConfirmation { Person = "N. N.", ConfirmedOn = Day } },
+            RecordsService.Actor)).Policy;
+        var enacted = await EnactAsync(confirmed);
+        var unconfirmed = new Policy(Template("policies/hamlet", 1)) { State = PolicyState.InForce, InForceFrom = Day };
+        Assert.Equal("state", Assert.Single(Assert.Single(await StageAsync(unconfirmed)).Faults).Field);
+        Assert.Equal("state", Assert.Single(Assert.Single(await StageAsync(new Policy(enacted) { Title = "other numbers" })).Faults).Field);
+        Assert.Empty(await StageAsync(enacted));
+    }
+
+    [Fact]
+    public async Task A_step_sent_again_is_answered_as_before_whatever_came_after_it()
+    {
+        var request = new CreatePolicyRequest { Policy = Template("policies/manor", 1), ChangeReason = "test", RequestId = Guid.NewGuid().ToString() };
+        var first = await Policies.CreatePolicyAsync(request, RecordsService.Actor);
+        await CreateAsync("policies/manor", 2);
+        Assert.Equal(first, await Policies.CreatePolicyAsync(request, RecordsService.Actor));
+    }
+
+    [Fact]
     public async Task The_next_document_has_the_next_number()
     {
         await CreateAsync("policies/village", 1);
         var error = await Assert.ThrowsAsync<RpcException>(() => CreateAsync("policies/village", 3));
         Assert.Equal(StatusCode.InvalidArgument, error.StatusCode);
         Assert.Contains("the next document of policies/village is 2", error.Status.Detail, StringComparison.Ordinal);
+    }
+
+    private async Task<IEnumerable<ImportRefusal>> StageAsync(Policy policy)
+    {
+        var import = (await service.Running.Imports.CreateImportAsync(new CreateImportRequest { ChangeReason = "test" }, RecordsService.Actor)).Import;
+        return (await service.Running.Imports.StageImportPieceAsync(new StageImportPieceRequest { Name = import.Name, PieceIndex = 0, Policies = { policy } }, RecordsService.Actor)).Refusals;
     }
 
     private static Policy Template(string name, int version) =>

@@ -74,6 +74,72 @@ public sealed class StructureChangeTests(RecordsService service) : IClassFixture
         Assert.Equal(expected, updated);
     }
 
+    /// <summary>Rule F4: the library's own merge writes 0 for a number that the change does not say; 0 trucks a day is the lowest live-load factor.</summary>
+    [Fact]
+    public async Task Rule_F4_A_masked_number_that_is_not_said_is_taken_out_and_not_set_to_zero()
+    {
+        var structure = await service.GetAsync();
+        var request = new UpdateStructureRequest
+        {
+            Structure = new Structure { Name = structure.Name, Etag = structure.Etag, Roadway = new Roadway() },
+            ChangeReason = "test",
+            UpdateMask = FieldMask.FromString("roadway.adtt_one_direction,roadway.left_kerb_m,inspection.interval_months"),
+            ValidateOnly = true,
+        };
+        var updated = (await service.Catalogue.UpdateStructureAsync(request, RecordsService.Actor)).Structure;
+        Assert.False(updated.Roadway.HasAdttOneDirection);
+        Assert.False(updated.Roadway.HasLeftKerbM);
+        Assert.False(updated.Inspection.HasIntervalMonths);
+        Assert.Equal(structure.Roadway.RightKerbM, updated.Roadway.RightKerbM);
+        Assert.Equal(structure.Inspection.InspectedOn, updated.Inspection.InspectedOn);
+    }
+
+    /// <summary>Every optional number of the first two levels, masked and not said, is absent afterwards.</summary>
+    [Fact]
+    public async Task Rule_F4_No_optional_field_becomes_zero_by_a_mask()
+    {
+        var structure = await service.GetAsync();
+        var tried = 0;
+        foreach (var field in Structure.Descriptor.Fields.InFieldNumberOrder().Where(f => f is { IsRepeated: false, FieldType: Google.Protobuf.Reflection.FieldType.Message }))
+        {
+            foreach (var inner in field.MessageType.Fields.InFieldNumberOrder().Where(f => f is { IsRepeated: false, HasPresence: true }))
+            {
+                var whole = structure.Clone();
+                var change = new Structure { Name = structure.Name };
+                var merged = Revisions.UpdateMasks.Merge(FieldMask.FromString($"{field.Name}.{inner.Name}"), change, whole);
+                var parent = (Google.Protobuf.IMessage?)field.Accessor.GetValue(merged);
+                Assert.True(parent is null || !inner.Accessor.HasValue(parent), $"{field.Name}.{inner.Name}");
+                tried++;
+            }
+        }
+
+        Assert.True(tried > 10, $"{tried} fields were tried.");
+    }
+
+    [Fact]
+    public async Task A_masked_update_sent_again_is_answered_as_before()
+    {
+        var structure = await service.GetAsync();
+        var request = new UpdateStructureRequest
+        {
+            Structure = new Structure { Name = structure.Name, Etag = structure.Etag, Owner = "masked and sent twice" },
+            ChangeReason = "test",
+            UpdateMask = FieldMask.FromString("owner"),
+            RequestId = Guid.NewGuid().ToString(),
+        };
+        var first = await service.Catalogue.UpdateStructureAsync(request, RecordsService.Actor);
+        Assert.Equal(first, await service.Catalogue.UpdateStructureAsync(request, RecordsService.Actor));
+    }
+
+    [Fact]
+    public async Task A_reason_with_a_control_character_is_refused()
+    {
+        var structure = await service.GetAsync();
+        var request = new UpdateStructureRequest { Structure = structure, ChangeReason = "cut\0short" };
+        var error = await Assert.ThrowsAsync<RpcException>(async () => await service.Catalogue.UpdateStructureAsync(request, RecordsService.Actor));
+        Assert.Contains(error.GetRpcStatus()!.GetDetail<BadRequest>()!.FieldViolations, v => v.Field == "change_reason");
+    }
+
     [Fact]
     public async Task A_structure_is_created_once_removed_and_created_again()
     {

@@ -50,6 +50,11 @@ def answers(port):
         return caller.connect_ex(("127.0.0.1", port)) == 0
 
 
+def heeds_interrupts():
+    """A run in the background of a script ignores SIGINT, and so would all that it starts."""
+    signal.signal(signal.SIGINT, signal.SIG_DFL)
+
+
 class Running:
     """A command that stays: started on entry, killed on leaving where it has not ended."""
 
@@ -65,7 +70,8 @@ class Running:
     def __enter__(self):
         # A process group of its own, so that a signal reaches all its processes and no others, as Ctrl-C does in a terminal.
         self.process = subprocess.Popen(
-            self._arguments, cwd=self._folder, env=self._environment, stdout=subprocess.PIPE, stderr=subprocess.STDOUT, text=True, start_new_session=True)
+            self._arguments, cwd=self._folder, env=self._environment, stdout=subprocess.PIPE, stderr=subprocess.STDOUT, text=True, start_new_session=True,
+            preexec_fn=heeds_interrupts)
         self._reader = threading.Thread(target=self._read, daemon=True)
         self._reader.start()
         return self
