@@ -38,7 +38,8 @@ public sealed class PolicyChanges
             var next = (newest is null ? 0 : PolicyDocuments.VersionOf(newest.Revision.Head.Name)) + 1;
             if (request.Policy.DocumentVersion != next)
             {
-                faults.Add("policy.document_version", FormattableString.Invariant($"Found {request.Policy.DocumentVersion}; the next document of {request.Policy.Name} is {next}."));
+                var there = newest is null ? "" : $"the newest document is {newest.Revision.Head.Name}, ";
+                faults.Add("policy.document_version", FormattableString.Invariant($"Found {request.Policy.DocumentVersion}; {there}the next document of {request.Policy.Name} is {next}."));
             }
         }
 
