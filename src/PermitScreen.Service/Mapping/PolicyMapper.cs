@@ -1,9 +1,11 @@
 using System.Collections.Immutable;
+using PermitScreen.Catalogue.Storage;
 using PermitScreen.Mechanics.Extremes;
 using PermitScreen.Mechanics.Faults;
 using PermitScreen.Rating.Checks;
 using PermitScreen.Rating.Policies;
 using PermitScreen.Rating.Structures;
+using PermitScreen.Service.Revisions;
 using C = PermitScreen.Contracts.V1;
 
 namespace PermitScreen.Service.Mapping;
@@ -78,13 +80,7 @@ internal static class PolicyMapper
 
     /// <summary>Fingerprint of a policy's content.</summary>
     /// <param name="policy">Policy.</param>
-    public static string Etag(C.Policy policy)
-    {
-        var content = policy.Clone();
-        content.Etag = "";
-        content.CatalogueVersion = 0;
-        return Etags.Of(content);
-    }
+    public static string Etag(C.Policy policy) => Digest.Of(CanonicalForm.Of(policy)).Etag;
 
     private static Policy? Numbers(C.Policy policy, FaultList faults)
     {

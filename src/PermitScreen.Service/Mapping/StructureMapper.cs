@@ -1,8 +1,10 @@
 using System.Collections.Immutable;
 using PermitScreen.Catalogue.Records;
+using PermitScreen.Catalogue.Storage;
 using PermitScreen.Mechanics.Faults;
 using PermitScreen.Rating.Checks;
 using PermitScreen.Rating.Structures;
+using PermitScreen.Service.Revisions;
 using C = PermitScreen.Contracts.V1;
 
 namespace PermitScreen.Service.Mapping;
@@ -73,13 +75,7 @@ internal static class StructureMapper
 
     /// <summary>Fingerprint of a structure's content, without what the service itself adds.</summary>
     /// <param name="structure">Structure.</param>
-    public static string Etag(C.Structure structure)
-    {
-        var content = structure.Clone();
-        content.Etag = "";
-        content.CatalogueVersion = 0;
-        return Etags.Of(content);
-    }
+    public static string Etag(C.Structure structure) => Digest.Of(CanonicalForm.Of(structure)).Etag;
 
     private static void Place(C.Place? place, FaultList faults)
     {

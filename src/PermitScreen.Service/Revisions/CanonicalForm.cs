@@ -15,6 +15,11 @@ internal static class CanonicalForm
     {
         // Set aside and put back: a copy of a large structure costs more than all the rest.
         var (etag, version) = (structure.Etag, structure.CatalogueVersion);
+        if (etag.Length == 0 && version == 0)
+        {
+            return structure.ToByteArray();
+        }
+
         (structure.Etag, structure.CatalogueVersion) = ("", 0);
         var bytes = structure.ToByteArray();
         (structure.Etag, structure.CatalogueVersion) = (etag, version);

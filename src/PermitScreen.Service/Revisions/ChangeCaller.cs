@@ -70,6 +70,18 @@ internal sealed class ChangeCaller(RecordsPlace place, TimeProvider time)
         return new RequestStamp(id.ToString("D"), fingerprint);
     }
 
+    /// <summary>Adds a fault where a change does not say which revision it rests on.</summary>
+    /// <param name="faults">Takes the fault.</param>
+    /// <param name="field">Field.</param>
+    /// <param name="etag">Etag.</param>
+    public static void RequireEtag(FaultList faults, string field, string etag)
+    {
+        if (etag.Length == 0)
+        {
+            faults.Add(field, "Missing; give the etag of the revision that the change rests on, so that nobody else's change is lost.");
+        }
+    }
+
     /// <summary>Adds a fault where a text that is kept holds what no text should.</summary>
     /// <param name="field">Field.</param>
     /// <param name="text">Text.</param>

@@ -56,7 +56,7 @@ public sealed class PolicyChanges
         }
 
         var content = Draft(request.Policy, faults);
-        RequireEtag(faults, "policy.etag", request.Policy?.Etag ?? "");
+        ChangeCaller.RequireEtag(faults, "policy.etag", request.Policy?.Etag ?? "");
         if (content is not null && !faults.Any)
         {
             RequireState(await NewestAsync(content.Name, context.CancellationToken), "revised; add the next document of the policy instead", PolicyState.Draft);
@@ -115,14 +115,6 @@ public sealed class PolicyChanges
         });
     }
 
-    private static void RequireEtag(FaultList faults, string field, string etag)
-    {
-        if (etag.Length == 0)
-        {
-            faults.Add(field, "Missing; give the etag of the revision that was read, so that nobody else's change is lost.");
-        }
-    }
-
     private static void RequireState(Policy policy, string what, params ReadOnlySpan<PolicyState> allowed)
     {
         if (!allowed.Contains(policy.State))
@@ -172,7 +164,7 @@ public sealed class PolicyChanges
         string action, string name, string etag, FaultList faults, Provenance provenance, RequestStamp? stamp, ServerCallContext context, Action<Policy> change)
     {
         Names.PolicyDocument(faults, "name", name);
-        RequireEtag(faults, "etag", etag);
+        ChangeCaller.RequireEtag(faults, "etag", etag);
         if (faults.Any)
         {
             throw BadRequests.From("The request", faults.All);

@@ -60,7 +60,7 @@ public sealed class StructureChanges
         }
 
         Names.Structure(faults, "structure.name", request.Structure.Name);
-        RequireEtag(faults, "structure.etag", request.Structure.Etag);
+        ChangeCaller.RequireEtag(faults, "structure.etag", request.Structure.Etag);
         var masks = UpdateMasks.Of(request.UpdateMask, faults);
         if (faults.Any)
         {
@@ -110,7 +110,7 @@ public sealed class StructureChanges
         var provenance = _caller.Read(context, request.ChangeReason, faults);
         var stamp = ChangeCaller.Stamp(request.RequestId, CanonicalForm.Fingerprint(request), faults);
         Names.Structure(faults, "name", request.Name);
-        RequireEtag(faults, "etag", request.Etag);
+        ChangeCaller.RequireEtag(faults, "etag", request.Etag);
         if (faults.Any)
         {
             throw BadRequests.From("The request", faults.All);
@@ -146,14 +146,6 @@ public sealed class StructureChanges
         }
 
         return new Structure(request.Structure) { Name = name };
-    }
-
-    private static void RequireEtag(FaultList faults, string field, string etag)
-    {
-        if (etag.Length == 0)
-        {
-            faults.Add(field, "Missing; give the etag of the revision that the change rests on, so that nobody else's change is lost.");
-        }
     }
 
     private static Structure Checked(Structure structure, ResourceContent content) => new(structure) { Etag = content.Hash.Etag, CatalogueVersion = 0 };
